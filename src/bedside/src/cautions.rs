@@ -1,0 +1,150 @@
+//! What to heed, the most dangerous first. Words are short, plain, and say what to do.
+
+use case::{Condition, Control, EntryKind, Now, Settings};
+use sources as s;
+
+use crate::Caution;
+use crate::offer::price;
+use crate::study::{Learnt, Study};
+
+fn caution(id: &'static str, words: impl Into<String>, source: Option<&s::Figure>) -> Caution {
+    Caution { id, words: words.into(), source: source.map(|figure| figure.id) }
+}
+
+/// Cautions for the case as it stands.
+pub(crate) fn of_case(study: &Study, now: &Now) -> Vec<Caution> {
+    let mut all = Vec::new();
+    let settings = study.history.settings_at(now.wall);
+    trapping(study, &settings, &mut all);
+    if let Some(learnt) = study.learnt() {
+        gas_cautions(study, learnt, &mut all);
+    }
+    record_cautions(study, &mut all);
+    all
+}
+
+/// Trapped gas, where something says so.
+fn trapping(study: &Study, settings: &Settings, all: &mut Vec<Caution>) {
+    let obstructed = study.history.has(|c| *c == Condition::AirflowObstruction) == Some(true);
+    let auto_peep =
+        matches!((settings.total_peep_cmh2o, settings.peep_cmh2o), (Some(total), Some(set)) if total > set);
+    if settings.flow_returns_to_zero == Some(false) || auto_peep {
+        all.push(caution(
+            "trapping",
+            "Gas is being trapped. If blood pressure drops: disconnect and let him breathe out.",
+            None,
+        ));
+    } else if obstructed {
+        all.push(caution(
+            "trapping_unknown",
+            "Airflow obstruction: trapping not known. If pressure drops, disconnect and let him breathe out.",
+            None,
+        ));
+    }
+}
+
+fn gas_cautions(study: &Study, learnt: &Learnt, all: &mut Vec<Caution>) {
+    let gas = &learnt.last_gas;
+    if gas.ph < s::CALL_PH.value {
+        all.push(caution("call", format!("pH {:.2}: call for help now.", gas.ph), Some(&s::CALL_PH)));
+    }
+    if retainer_unanswered(study, learnt) {
+        all.push(caution(
+            "retainer_question",
+            "High HCO₃: may usually retain CO₂. Ask the history. Aim for a pH, not for PaCO₂ 40.",
+            Some(&s::RETAINER_SBE),
+        ));
+    }
+    if learnt.standard_be <= s::METABOLIC_SBE.value {
+        all.push(caution(
+            "metabolic",
+            "Metabolic acidosis: less ventilation than his own drops pH at once. pH assumes no new acid.",
+            Some(&s::METABOLIC_SBE),
+        ));
+    }
+    if learnt.ratio_held() {
+        all.push(caution(
+            "chemistry_edge",
+            "pH outside 6.7 to 7.7: the blood's CO₂ curve is less sure here.",
+            Some(&s::DOUGLAS_PH_LEAST),
+        ));
+    }
+    if matches!(gas.reported_at_c, Some(t) if (t - s::NORMAL_TEMPERATURE.value).abs() > 0.05) {
+        all.push(caution(
+            "reported_at",
+            "The gas was not reported at 37 °C; the forecast takes it as if it were.",
+            None,
+        ));
+    }
+}
+
+/// High base excess with a high PaCO2, and nobody has said whether he is a chronic retainer.
+pub(crate) fn retainer_unanswered(study: &Study, learnt: &Learnt) -> bool {
+    study.history.has(is_retainer).is_none()
+        && learnt.standard_be >= s::RETAINER_SBE.value
+        && learnt.last_gas.pco2_mmhg > s::RETAINER_PACO2.value
+}
+
+/// Whether a condition is chronic retention.
+pub(crate) fn is_retainer(condition: &Condition) -> bool {
+    matches!(condition, Condition::ChronicRetainer { .. })
+}
+
+/// What the record holds that is not used.
+fn record_cautions(study: &Study, all: &mut Vec<Caution>) {
+    let count =
+        |wanted: fn(&EntryKind) -> bool| study.history.entries.iter().filter(|e| wanted(&e.kind)).count();
+    if count(|k| matches!(k, EntryKind::EndTidal(_))) > 0 {
+        all.push(caution("end_tidal_kept", "EtCO₂ is kept in the record and not learnt from yet.", None));
+    }
+    let other_sites = count(|k| matches!(k, EntryKind::Gas(gas) if gas.site != case::Site::Arterial));
+    if other_sites > 0 {
+        all.push(caution(
+            "not_arterial_kept",
+            "Gases that are not arterial are kept and not learnt from.",
+            None,
+        ));
+    }
+    let not_understood = count(|k| matches!(k, EntryKind::NotUnderstood(_)))
+        + study.history.entries.iter().filter(|e| !e.not_understood.is_empty()).count();
+    if not_understood > 0 {
+        all.push(caution(
+            "not_understood",
+            format!("{not_understood} in the record could not be understood and is not used. See Record."),
+            None,
+        ));
+    }
+}
+
+/// Cautions that a change brings, a broken limit first.
+pub(crate) fn of_change(study: &Study, current: &Settings, change: &Settings) -> Vec<Caution> {
+    let mut all = Vec::new();
+    let Some(price) = price(&study.history.patient, current, change) else { return all };
+    if let Some(plateau) = price.plateau_cmh2o.filter(|p| *p > s::PLATEAU_MOST.value) {
+        let words = format!("Plateau about {plateau:.0} cmH₂O, over {:.0}.", s::PLATEAU_MOST.value);
+        all.push(caution("plateau", words, Some(&s::PLATEAU_MOST)));
+    }
+    let faster = |old: Option<f64>| old.is_none_or(|old| price.rate_per_min > old);
+    let obstructed = study.history.has(|c| *c == Condition::AirflowObstruction) == Some(true);
+    if obstructed && faster(current.rate_per_min) {
+        all.push(caution(
+            "obstruction_rate",
+            "Airflow obstruction: more rate can raise PaCO₂ and stop the heart.",
+            None,
+        ));
+    }
+    if price.rate_per_min > s::RATE_MOST.value {
+        let words = format!("Rate {:.0}, over {:.0} a minute.", price.rate_per_min, s::RATE_MOST.value);
+        all.push(caution("rate", words, Some(&s::RATE_MOST)));
+    }
+    if let Some(ml_kg) = price.ml_per_kg.filter(|v| *v > s::VT_LUNG_MOST.value) {
+        let words = format!("{ml_kg:.1} mL/kg, over {:.0}.", s::VT_LUNG_MOST.value);
+        all.push(caution("ml_per_kg", words, Some(&s::VT_LUNG_MOST)));
+    }
+    if current.control == Some(Control::Volume)
+        && price.rate_per_min > current.rate_per_min.unwrap_or(f64::MAX)
+    {
+        all.push(caution("check_trapping", "After a faster rate look: does flow come back to zero?", None));
+    }
+    all
+}

@@ -1,0 +1,121 @@
+//! From weighted members to the percentiles that are shown.
+
+use physiology::{
+    Future, hco3_mmol_l, minutes_to_share, minutes_to_within, normal_quantile, ph_at, standard_base_excess,
+    weighted_quantiles,
+};
+use sources as s;
+
+use crate::{Band, Forecast, Quantiles, Settled};
+
+/// The edges of what is shown: eight times in ten between the outer two.
+const EDGES: [f64; 3] = [0.1, 0.5, 0.9];
+
+/// Each member's reading is spread over this many equal shares of the measurement error: with one draw a
+/// member the edges of a reading would be ragged.
+const ERROR_SHARES: usize = 9;
+
+/// The share of the way after which "90 %" is reached.
+const NINETY_PERCENT: f64 = 0.9;
+
+/// How far a course is run to see it settle, min: a day.
+pub(crate) const SETTLING_MIN: f64 = 1440.0;
+
+/// A gas as the pH of the members hangs on it.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(crate) struct Anchor {
+    /// When it was drawn, minutes from the start.
+    pub at_min: f64,
+    /// Its pH.
+    pub ph: f64,
+}
+
+fn quantiles(mut pairs: Vec<(f64, f64)>) -> Quantiles {
+    let [p10, p50, p90] = weighted_quantiles(&mut pairs, EDGES);
+    Quantiles { p10, p50, p90 }
+}
+
+fn push(band: &mut Band, q: Quantiles) {
+    band.p10.push(q.p10);
+    band.p50.push(q.p50);
+    band.p90.push(q.p90);
+}
+
+/// Spreads each (value, weight) over the measurement error.
+fn with_error(pairs: &[(f64, f64)], error: impl Fn(f64, f64) -> f64) -> Vec<(f64, f64)> {
+    let shares = ERROR_SHARES as f64;
+    let normals: Vec<f64> = (0..ERROR_SHARES).map(|k| normal_quantile((k as f64 + 0.5) / shares)).collect();
+    let mut spread = Vec::with_capacity(pairs.len() * ERROR_SHARES);
+    for (value, weight) in pairs {
+        spread.extend(normals.iter().map(|z| (error(*value, *z), weight / shares)));
+    }
+    spread
+}
+
+fn read_paco2(paco2: f64, z: f64) -> f64 {
+    paco2 * libm::exp(s::ANALYSER_PACO2.value * z)
+}
+
+fn read_ph(ph: f64, z: f64) -> f64 {
+    ph + s::ANALYSER_PH.value * z
+}
+
+/// Standard base excess of each member: from the gas's pH less its error, at the PaCO2 the member truly had.
+pub(crate) fn base_excesses(futures: &[Future], anchor: &Anchor) -> Vec<f64> {
+    futures
+        .iter()
+        .map(|f| standard_base_excess(read_ph(anchor.ph, -f.ph_error), f.course.paco2_at(anchor.at_min)))
+        .collect()
+}
+
+/// The 95 % band of what a gas at `at_min` would read, mmHg.
+pub(crate) fn reading_95(futures: &[Future], at_min: f64) -> (f64, f64) {
+    const TAILS: [f64; 2] = [0.025, 0.975];
+    let pairs: Vec<(f64, f64)> = futures.iter().map(|f| (f.course.paco2_at(at_min), f.weight)).collect();
+    let [low, high] = weighted_quantiles(&mut with_error(&pairs, read_paco2), TAILS);
+    (low, high)
+}
+
+/// The forecast at `minutes` after `now_min`.
+pub(crate) fn forecast(futures: &[Future], anchor: &Anchor, now_min: f64, minutes: &[f64]) -> Forecast {
+    let excesses = base_excesses(futures, anchor);
+    let phs = |pairs: &[(f64, f64)]| -> Vec<(f64, f64)> {
+        pairs.iter().zip(&excesses).map(|((p, w), be)| (ph_at(*p, *be), *w)).collect()
+    };
+    let mut forecast = Forecast {
+        minutes: minutes.to_vec(),
+        paco2_mmhg: Band::default(),
+        ph: Band::default(),
+        hco3_mmol_l: Band::default(),
+        gas_would_read_paco2_mmhg: Band::default(),
+        gas_would_read_ph: Band::default(),
+        settled: settled(futures, &phs),
+        minutes_to_within_2_mmhg: duration(futures, |f| {
+            minutes_to_within(&f.course, now_min, f.settled_mmhg, s::SETTLED_WITHIN.value)
+        }),
+        minutes_to_90_percent: duration(futures, |f| {
+            minutes_to_share(&f.course, now_min, f.settled_mmhg, NINETY_PERCENT)
+        }),
+    };
+    for minute in minutes {
+        let paco2: Vec<(f64, f64)> =
+            futures.iter().map(|f| (f.course.paco2_at(now_min + minute), f.weight)).collect();
+        let ph = phs(&paco2);
+        let hco3 = paco2.iter().zip(&ph).map(|((p, w), (ph, _))| (hco3_mmol_l(*ph, *p), *w)).collect();
+        push(&mut forecast.gas_would_read_paco2_mmhg, quantiles(with_error(&paco2, read_paco2)));
+        push(&mut forecast.gas_would_read_ph, quantiles(with_error(&ph, read_ph)));
+        push(&mut forecast.paco2_mmhg, quantiles(paco2));
+        push(&mut forecast.ph, quantiles(ph));
+        push(&mut forecast.hco3_mmol_l, quantiles(hco3));
+    }
+    forecast
+}
+
+fn settled(futures: &[Future], phs: &impl Fn(&[(f64, f64)]) -> Vec<(f64, f64)>) -> Settled {
+    let paco2: Vec<(f64, f64)> = futures.iter().map(|f| (f.settled_mmhg, f.weight)).collect();
+    Settled { ph: quantiles(phs(&paco2)), paco2_mmhg: quantiles(paco2) }
+}
+
+fn duration(futures: &[Future], of: impl Fn(&Future) -> Option<f64>) -> Quantiles {
+    quantiles(futures.iter().map(|f| (of(f).unwrap_or(SETTLING_MIN), f.weight)).collect())
+}

@@ -1,0 +1,251 @@
+//! Learning from gases: the most likely body by Gauss–Newton, then members drawn around it, each weighed
+//! once by how well it fits. Members are never resampled: with a few gases that collapses onto a handful.
+
+use libm::{exp, log, sqrt};
+use sources as s;
+
+use crate::draws::standard_normals;
+use crate::linear::{backward, cholesky, forward};
+use crate::priors::{JUMP_FIRST, Member, Priors, Step};
+use crate::{Chemistry, Course};
+
+/// Gauss–Newton stops after this many passes.
+const PASSES: usize = 4;
+
+/// Longest step of a pass, in standard deviations of the prior: farther the model is no longer straight.
+const LONGEST_STEP: f64 = 3.0;
+
+/// A pass that moves less than this, in standard deviations, changes no answer.
+const STEP_DONE: f64 = 1e-4;
+
+/// Difference for the slopes, in standard deviations: large against rounding, small against curvature.
+const DIFFERENCE: f64 = 1e-3;
+
+/// Difference for the bend: a second difference needs a longer one.
+const BEND_DIFFERENCE: f64 = 0.05;
+
+/// Draws beside the coordinates: a jump that a future change brings, the error of a pH, of a PaCO2.
+const EXTRA: usize = 3;
+
+/// A PaCO2 that was measured.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Observation {
+    /// When, min.
+    pub at_min: f64,
+    /// PaCO2, mmHg.
+    pub paco2_mmhg: f64,
+    /// Error as a spread of ln.
+    pub ln_sd: f64,
+}
+
+/// What is learnt from.
+#[derive(Debug, Clone, Copy)]
+pub struct Learning<'a> {
+    /// Everything known before a gas.
+    pub priors: &'a Priors,
+    /// The patient's CO2 curve.
+    pub chemistry: &'a Chemistry,
+    /// The gases, in order.
+    pub observations: &'a [Observation],
+}
+
+/// Why nothing was learnt.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, thiserror::Error)]
+pub enum NoMode {
+    /// The system of a pass is singular or a value is not finite.
+    #[error("no body inside the priors fits these gases and settings. Check the numbers typed.")]
+    Singular,
+    /// Too few members carry the weight.
+    #[error(
+        "too few simulated bodies fit these gases ({0} of the 64 needed). Check the numbers typed, or start again from a new gas."
+    )]
+    TooFew(usize),
+}
+
+/// Bodies that fit the gases, each with its weight.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Ensemble {
+    members: Vec<Member>,
+    /// Not negative, sum 1.
+    weights: Vec<f64>,
+    extra: Vec<[f64; EXTRA]>,
+    chemistry: Chemistry,
+    effective: f64,
+}
+
+impl Learning<'_> {
+    /// Learns. Same seed, same bits.
+    ///
+    /// # Errors
+    /// [`NoMode`] when no mode is found or fewer than 64 members (a quarter of them when fewer than 256 are
+    /// asked for) carry the weight.
+    pub fn ensemble(&self, members: usize, seed: u32) -> Result<Ensemble, NoMode> {
+        let (mode, root) = self.mode()?;
+        let n = mode.len();
+        let draws = standard_normals(members, n + EXTRA, seed);
+        let mut drawn = Vec::with_capacity(members);
+        let mut log_weights = Vec::with_capacity(members);
+        let mut extra = Vec::with_capacity(members);
+        for row in &draws {
+            let (xi, rest) = row.split_at(n);
+            let offset = backward(&root, xi);
+            let u: Vec<f64> =
+                mode.iter().zip(&offset).map(|(m, o)| m + s::PROPOSAL_SPREAD.value * o).collect();
+            let member = self.priors.member(&u, Some(self.chemistry));
+            let fit = self.residuals(&u, &member);
+            log_weights.push(0.5 * (square(xi) - square(&fit)));
+            drawn.push(member);
+            extra.push([rest[0], rest[1], rest[2]]);
+        }
+        let weights = normalised(&log_weights).ok_or(NoMode::Singular)?;
+        let effective = 1.0 / square(&weights);
+        let least = s::MEMBERS_LEAST.value.min(0.25 * members as f64);
+        if effective < least {
+            return Err(NoMode::TooFew(effective as usize));
+        }
+        Ok(Ensemble { members: drawn, weights, extra, chemistry: self.chemistry.clone(), effective })
+    }
+
+    /// The most likely point and the Cholesky factor of the curvature there.
+    fn mode(&self) -> Result<(Vec<f64>, Vec<Vec<f64>>), NoMode> {
+        let n = self.priors.dimensions();
+        let mut u = vec![0.0; n];
+        for _ in 0..PASSES {
+            let (gradient, curvature) = self.linearised(&u);
+            let l = cholesky(&curvature).ok_or(NoMode::Singular)?;
+            let mut step = backward(&l, &forward(&l, &gradient));
+            let length = sqrt(square(&step));
+            if !length.is_finite() {
+                return Err(NoMode::Singular);
+            }
+            if length > LONGEST_STEP {
+                step.iter_mut().for_each(|s| *s *= LONGEST_STEP / length);
+            }
+            u.iter_mut().zip(&step).for_each(|(u, s)| *u -= s);
+            if length < STEP_DONE {
+                break;
+            }
+        }
+        let (_, mut curvature) = self.linearised(&u);
+        let plain = cholesky(&curvature).ok_or(NoMode::Singular)?;
+        self.add_bend_of_production(&u, &mut curvature);
+        Ok((u, cholesky(&curvature).unwrap_or(plain)))
+    }
+
+    /// Adds what Gauss–Newton leaves out where it matters: far from its prior the production's residual bends
+    /// with the dead spaces, and members drawn without that bend carry little weight. No body is run for it.
+    fn add_bend_of_production(&self, u: &[f64], curvature: &mut [Vec<f64>]) {
+        let residual = |moves: [(usize, f64); 2]| {
+            let mut moved = u.to_vec();
+            moves.iter().for_each(|(i, by)| moved[*i] += by);
+            self.priors.member(&moved, None).production_residual
+        };
+        let here = residual([(0, 0.0), (0, 0.0)]);
+        let d = BEND_DIFFERENCE;
+        for i in 0..u.len().min(JUMP_FIRST) {
+            for j in 0..=i {
+                let bend = residual([(i, d), (j, d)]) - residual([(i, d), (j, -d)]) - residual([(i, -d), (j, d)])
+                    + residual([(i, -d), (j, -d)]);
+                let added = here * bend / (4.0 * d * d);
+                curvature[i][j] += added;
+                if i != j {
+                    curvature[j][i] += added;
+                }
+            }
+        }
+    }
+
+    /// Jᵀr and JᵀJ at `u`.
+    fn linearised(&self, u: &[f64]) -> (Vec<f64>, Vec<Vec<f64>>) {
+        let n = u.len();
+        let here = self.residuals(u, &self.priors.member(u, Some(self.chemistry)));
+        let mut moved = u.to_vec();
+        let columns: Vec<Vec<f64>> = (0..n)
+            .map(|i| {
+                moved[i] = u[i] + DIFFERENCE;
+                let there = self.residuals(&moved, &self.priors.member(&moved, Some(self.chemistry)));
+                moved[i] = u[i];
+                there.iter().zip(&here).map(|(a, b)| (a - b) / DIFFERENCE).collect()
+            })
+            .collect();
+        let dot = |a: &[f64], b: &[f64]| a.iter().zip(b).map(|(x, y)| x * y).sum::<f64>();
+        let gradient = columns.iter().map(|c| dot(c, &here)).collect();
+        let curvature = columns.iter().map(|a| columns.iter().map(|b| dot(a, b)).collect()).collect();
+        (gradient, curvature)
+    }
+
+    /// Prior residuals, then (ln model − ln measured)/error of each gas.
+    fn residuals(&self, u: &[f64], member: &Member) -> Vec<f64> {
+        let mut residuals = u.to_vec();
+        residuals[0] = member.production_residual;
+        if let Some(last) = self.observations.iter().map(|o| o.at_min).reduce(f64::max) {
+            let course = member.course(self.chemistry, last, 1);
+            residuals.extend(
+                self.observations
+                    .iter()
+                    .map(|o| (log(course.paco2_at(o.at_min)) - log(o.paco2_mmhg)) / o.ln_sd),
+            );
+        }
+        residuals
+    }
+}
+
+fn square(values: &[f64]) -> f64 {
+    values.iter().map(|v| v * v).sum()
+}
+
+/// Weights with sum 1 from their logarithms; `None` when none is finite.
+fn normalised(logs: &[f64]) -> Option<Vec<f64>> {
+    let most = logs.iter().copied().filter(|l| l.is_finite()).reduce(f64::max)?;
+    let raw: Vec<f64> = logs.iter().map(|l| if l.is_finite() { exp(l - most) } else { 0.0 }).collect();
+    let total: f64 = raw.iter().sum();
+    Some(raw.into_iter().map(|w| w / total).collect())
+}
+
+/// One member's future as an answer needs it.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Future {
+    /// Its course, past and future.
+    pub course: Course,
+    /// Where it settles, mmHg.
+    pub settled_mmhg: f64,
+    /// Its weight; those of an ensemble sum to 1.
+    pub weight: f64,
+    /// Standard normal for the error of a pH.
+    pub ph_error: f64,
+    /// Standard normal for the error of a PaCO2.
+    pub paco2_error: f64,
+}
+
+impl Ensemble {
+    /// Effective number of members: 1/Σw².
+    #[must_use]
+    pub fn effective(&self) -> f64 {
+        self.effective
+    }
+
+    /// The CO2 curve the members share.
+    #[must_use]
+    pub fn chemistry(&self) -> &Chemistry {
+        &self.chemistry
+    }
+
+    /// Each member from its first step to `to_min`, with `change` made on top where one is given; its
+    /// `jump_sd` says how far R may move with it.
+    #[must_use]
+    pub fn futures(&self, to_min: f64, change: Option<&Step>) -> Vec<Future> {
+        let run = |((member, weight), extra): ((&Member, &f64), &[f64; EXTRA])| {
+            let mut inputs = member.inputs.clone();
+            if let Some(step) = change {
+                inputs.retain(|input| input.at_min < step.at_min || input.at_min <= member.inputs[0].at_min);
+                inputs.push(member.input(step, step.jump_sd * extra[0]));
+            }
+            let from = inputs[0].at_min;
+            let settled_mmhg = inputs[inputs.len() - 1].drive.settled_mmhg();
+            let start = member.start(&self.chemistry);
+            let course = Course::run(&member.body, &self.chemistry, start, (from, to_min), &inputs, 1);
+            Future { course, settled_mmhg, weight: *weight, ph_error: extra[1], paco2_error: extra[2] }
+        };
+        self.members.iter().zip(&self.weights).zip(&self.extra).map(run).collect()
+    }
+}

@@ -1,0 +1,3 @@
+//! Properties of the body that hold whatever the patient.
+
+mod body;
