@@ -28,7 +28,7 @@ const MAN_70_KG: Patient = Patient {
 
 fn exactly() -> Exactly {
     let input = ChemistryInput { standard_be: -0.58, hb_g_dl: 14.0, saturation: 0.97 };
-    Exactly { chemistry: Chemistry::new(input).unwrap(), patient: MAN_70_KG }
+    Exactly { chemistry: Chemistry::new(input).expect("normal blood has a curve"), patient: MAN_70_KG }
 }
 
 fn step(at_min: f64, rate_per_min: f64, tidal_volume_ml: f64) -> Step {
@@ -68,7 +68,12 @@ fn settles_where_the_863_equation_says() {
 #[test]
 fn co2_is_conserved() {
     let exactly = exactly();
-    let steps = [step(0.0, RATE_AT_40, 500.0), step(5.0, 30.0, 500.0), step(40.0, 6.0, 450.0), step(90.0, 14.0, 600.0)];
+    let steps = [
+        step(0.0, RATE_AT_40, 500.0),
+        step(5.0, 30.0, 500.0),
+        step(40.0, 6.0, 450.0),
+        step(90.0, 14.0, 600.0),
+    ];
     let member = priors(&exactly, 0.33, &steps).at_means(&exactly.chemistry);
     let start = member.start(&exactly.chemistry);
     for minutes in [1.0, 10.0, 60.0, 240.0] {
@@ -83,18 +88,23 @@ fn co2_is_conserved() {
 #[test]
 fn the_result_does_not_depend_on_the_step() {
     let exactly = exactly();
-    for (rate, volume) in [(2.0 * RATE_AT_40, 500.0), (0.5 * RATE_AT_40, 500.0), (0.0, 500.0), (35.0, 700.0)] {
+    for (rate, volume) in [(2.0 * RATE_AT_40, 500.0), (0.5 * RATE_AT_40, 500.0), (0.0, 500.0), (35.0, 700.0)]
+    {
         let steps = [step(0.0, RATE_AT_40, 500.0), step(5.0, rate, volume)];
         let member = priors(&exactly, 0.33, &steps).at_means(&exactly.chemistry);
         let end = if rate > 0.0 { 240.0 } else { 15.0 };
-        let (once, eighth) = (member.course(&exactly.chemistry, end, 1), member.course(&exactly.chemistry, end, 8));
+        let (once, eighth) =
+            (member.course(&exactly.chemistry, end, 1), member.course(&exactly.chemistry, end, 8));
         let mut worst = 0.0_f64;
         let mut minute = 5.0;
         while minute < end {
             worst = worst.max((once.paco2_at(minute) - eighth.paco2_at(minute)).abs());
             minute += 0.05;
         }
-        println!("rate {rate:.1}: {} moments, worst {worst:.4} mmHg against steps an eighth as long", once.points().count());
+        println!(
+            "rate {rate:.1}: {} moments, worst {worst:.4} mmHg against steps an eighth as long",
+            once.points().count()
+        );
         assert!(worst < STEP_MMHG);
     }
 }
@@ -148,7 +158,8 @@ fn the_in_vivo_line() {
 fn finite_from_5_to_160_kg() {
     for kg in [5.0, 12.0, 40.0, 70.0, 160.0] {
         for age in [0.2, 4.0, 12.0, 30.0, 90.0] {
-            for (rate, volume) in [(2.0, 15.0), (80.0, 15.0), (2.0, 2000.0), (80.0, 2000.0), (20.0, 6.0 * kg)] {
+            for (rate, volume) in [(2.0, 15.0), (80.0, 15.0), (2.0, 2000.0), (80.0, 2000.0), (20.0, 6.0 * kg)]
+            {
                 for be in [-28.0, 0.0, 25.0] {
                     let patient = Patient { age_years: Some(age), weight_kg: Some(kg), ..Patient::default() };
                     let input = ChemistryInput { standard_be: be, hb_g_dl: 12.0, saturation: 0.95 };
@@ -157,7 +168,10 @@ fn finite_from_5_to_160_kg() {
                     let priors = Priors::new(&patient, true, false, &Exact::default(), &steps, 0.1);
                     let course = priors.at_means(&chemistry).course(&chemistry, 300.0, 1);
                     for (minute, paco2) in course.points() {
-                        assert!(paco2.is_finite() && paco2 >= 0.0, "{kg} kg {age} y {rate}×{volume} BE {be} at {minute}: {paco2}");
+                        assert!(
+                            paco2.is_finite() && paco2 >= 0.0,
+                            "{kg} kg {age} y {rate}×{volume} BE {be} at {minute}: {paco2}"
+                        );
                     }
                 }
             }

@@ -194,7 +194,15 @@ impl History {
 
     /// What happened after `gas_at` that a forecast from that gas can't carry.
     pub fn unsettled_since(&self, gas_at: Moment) -> Option<Standing> {
-        self.entries.iter().filter(|e| e.at > gas_at).find_map(|e| match e.kind {
+        self.entries.iter().filter(|e| e.at >= gas_at).find_map(|e| match &e.kind {
+            EntryKind::NotUnderstood(unknown) if could_change_the_answer(&unknown.kind) => Some(withheld(
+                "not_understood",
+                format!(
+                    "An entry since the last gas ({}) can't be understood, and it could change this.",
+                    unknown.kind
+                ),
+                "Read it in Record and type what it says.",
+            )),
             EntryKind::BicarbonateGiven { .. } => Some(withheld(
                 "bicarbonate",
                 "Bicarbonate was given after the last gas. It adds CO₂ and moves pH.",
@@ -245,6 +253,22 @@ impl Driving {
             jump_sd: 0.0,
         })
     }
+}
+
+/// Kinds that are read when they are written as they should be: one that is not could hide a change of
+/// breath, blood or circulation.
+fn could_change_the_answer(kind: &str) -> bool {
+    matches!(
+        kind,
+        "settings"
+            | "gas"
+            | "gas_verdict"
+            | "correction"
+            | "breathing_stopped"
+            | "breathing_restored"
+            | "circulation"
+            | "given"
+    )
 }
 
 /// Whether the breath under these settings can be read off, though it was not yet.

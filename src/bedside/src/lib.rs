@@ -16,4 +16,5 @@ pub use answer::{Answer, Assumed, Caution, Condition, Standing, Status, Withheld
 pub use ask::{Question, QuestionKind, ask_about_entry};
 pub use forecast::{Band, Forecast, Quantiles, Ratio, Settled};
 pub use offer::{Offer, Offers, Price};
-pub use study::{Doubt, Freshness, Options, Study};
+pub use study::{Doubt, Freshness, HORIZON_MIN, Options, Study};
+pub use summary::{Anchor, Members, members_at, reading_95, summarise};

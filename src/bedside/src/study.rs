@@ -14,6 +14,9 @@ use crate::{
     Answer, Caution, Forecast, Price, Quantiles, Ratio, Standing, Status, assumed, cautions, summary,
 };
 
+/// How far ahead a forecast may be asked for, min.
+pub const HORIZON_MIN: f64 = s::HORIZON.value;
+
 /// How a study is made.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub struct Options {
@@ -185,7 +188,7 @@ impl Study {
         let now_min = now.wall.minutes_since(learnt.start);
         let step = planned.and_then(|settings| self.step_under(learnt, settings, now.wall));
         let futures = learnt.ensemble.futures(now_min + SETTLING_MIN, step.as_ref());
-        summary::forecast(&futures, &learnt.anchor, now_min, minutes)
+        summary::summarise(&futures, &learnt.anchor, now_min, minutes)
     }
 
     /// The step that `settings` make at `at`, with the jump of R that its size brings; `None` when nothing that
@@ -196,7 +199,7 @@ impl Study {
         if (Step { at_min: before.at_min, ..step }) == before {
             return None;
         }
-        step.jump_sd = jump_sd(&learnt.priors, &before, &step);
+        step.jump_sd = learnt.priors.jump_sd(&before, &step);
         Some(step)
     }
 
@@ -260,17 +263,6 @@ impl Learnt {
     pub(crate) fn ratio_held(&self) -> bool {
         self.ensemble.chemistry().ratio_held_at(self.last_gas.pco2_mmhg)
     }
-}
-
-/// SD of the jump of ln R between two steps: the whole of it from a ratio of 1.4 on, less for less.
-fn jump_sd(priors: &Priors, before: &Step, after: &Step) -> f64 {
-    let ventilation = |step: &Step| priors.alveolar_ventilation_at_means(step);
-    let (old, new) = (ventilation(before), ventilation(after));
-    if !(old > 0.0 && new > 0.0) {
-        return 0.0;
-    }
-    let size = libm::log(new / old).abs() / libm::log(s::JUMP_FULL_AT.value);
-    s::JUMP.spread * if size < 1.0 { size } else { 1.0 }
 }
 
 /// Withheld where a shown edge leaves the range the chemistry is made for.
@@ -459,7 +451,7 @@ fn priors_with_jumps(history: &History, steps: Vec<Step>, offset_sd: f64) -> Pri
     let without = make(&steps);
     let mut with = steps;
     for i in 1..with.len() {
-        with[i].jump_sd = jump_sd(&without, &with[i - 1], &with[i]);
+        with[i].jump_sd = without.jump_sd(&with[i - 1], &with[i]);
     }
     make(&with)
 }

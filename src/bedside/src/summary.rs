@@ -23,7 +23,7 @@ pub(crate) const SETTLING_MIN: f64 = 1440.0;
 
 /// A gas as the pH of the members hangs on it.
 #[derive(Debug, Clone, Copy, PartialEq)]
-pub(crate) struct Anchor {
+pub struct Anchor {
     /// When it was drawn, minutes from the start.
     pub at_min: f64,
     /// Its pH.
@@ -61,27 +61,47 @@ fn read_ph(ph: f64, z: f64) -> f64 {
 }
 
 /// Standard base excess of each member: from the gas's pH less its error, at the PaCO2 the member truly had.
-pub(crate) fn base_excesses(futures: &[Future], anchor: &Anchor) -> Vec<f64> {
+fn base_excesses(futures: &[Future], anchor: &Anchor) -> Vec<f64> {
     futures
         .iter()
         .map(|f| standard_base_excess(read_ph(anchor.ph, -f.ph_error), f.course.paco2_at(anchor.at_min)))
         .collect()
 }
 
-/// The 95 % band of what a gas at `at_min` would read, mmHg.
-pub(crate) fn reading_95(futures: &[Future], at_min: f64) -> (f64, f64) {
+/// What each member's PaCO2 (mmHg) and pH are at one minute, each with its weight.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Members {
+    /// (PaCO2, weight).
+    pub paco2: Vec<(f64, f64)>,
+    /// (pH, weight).
+    pub ph: Vec<(f64, f64)>,
+}
+
+/// The members at `at_min`, before they become percentiles.
+#[must_use]
+pub fn members_at(futures: &[Future], anchor: &Anchor, at_min: f64) -> Members {
+    members(futures, &base_excesses(futures, anchor), at_min)
+}
+
+fn members(futures: &[Future], excesses: &[f64], at_min: f64) -> Members {
+    let paco2: Vec<(f64, f64)> = futures.iter().map(|f| (f.course.paco2_at(at_min), f.weight)).collect();
+    let ph = paco2.iter().zip(excesses).map(|((p, w), be)| (ph_at(*p, *be), *w)).collect();
+    Members { paco2, ph }
+}
+
+/// The 95 % band of what a gas at `at_min` would read, mmHg: its lower and upper edge.
+#[must_use]
+pub fn reading_95(futures: &[Future], at_min: f64) -> (f64, f64) {
     const TAILS: [f64; 2] = [0.025, 0.975];
     let pairs: Vec<(f64, f64)> = futures.iter().map(|f| (f.course.paco2_at(at_min), f.weight)).collect();
     let [low, high] = weighted_quantiles(&mut with_error(&pairs, read_paco2), TAILS);
     (low, high)
 }
 
-/// The forecast at `minutes` after `now_min`.
-pub(crate) fn forecast(futures: &[Future], anchor: &Anchor, now_min: f64, minutes: &[f64]) -> Forecast {
+/// The forecast at `minutes` after `now_min`: the one place where members become percentiles.
+#[must_use]
+pub fn summarise(futures: &[Future], anchor: &Anchor, now_min: f64, minutes: &[f64]) -> Forecast {
     let excesses = base_excesses(futures, anchor);
-    let phs = |pairs: &[(f64, f64)]| -> Vec<(f64, f64)> {
-        pairs.iter().zip(&excesses).map(|((p, w), be)| (ph_at(*p, *be), *w)).collect()
-    };
     let mut forecast = Forecast {
         minutes: minutes.to_vec(),
         paco2_mmhg: Band::default(),
@@ -89,7 +109,7 @@ pub(crate) fn forecast(futures: &[Future], anchor: &Anchor, now_min: f64, minute
         hco3_mmol_l: Band::default(),
         gas_would_read_paco2_mmhg: Band::default(),
         gas_would_read_ph: Band::default(),
-        settled: settled(futures, &phs),
+        settled: settled(futures, &excesses),
         minutes_to_within_2_mmhg: duration(futures, |f| {
             minutes_to_within(&f.course, now_min, f.settled_mmhg, s::SETTLED_WITHIN.value)
         }),
@@ -98,9 +118,7 @@ pub(crate) fn forecast(futures: &[Future], anchor: &Anchor, now_min: f64, minute
         }),
     };
     for minute in minutes {
-        let paco2: Vec<(f64, f64)> =
-            futures.iter().map(|f| (f.course.paco2_at(now_min + minute), f.weight)).collect();
-        let ph = phs(&paco2);
+        let Members { paco2, ph } = members(futures, &excesses, now_min + minute);
         let hco3 = paco2.iter().zip(&ph).map(|((p, w), (ph, _))| (hco3_mmol_l(*ph, *p), *w)).collect();
         push(&mut forecast.gas_would_read_paco2_mmhg, quantiles(with_error(&paco2, read_paco2)));
         push(&mut forecast.gas_would_read_ph, quantiles(with_error(&ph, read_ph)));
@@ -111,9 +129,10 @@ pub(crate) fn forecast(futures: &[Future], anchor: &Anchor, now_min: f64, minute
     forecast
 }
 
-fn settled(futures: &[Future], phs: &impl Fn(&[(f64, f64)]) -> Vec<(f64, f64)>) -> Settled {
-    let paco2: Vec<(f64, f64)> = futures.iter().map(|f| (f.settled_mmhg, f.weight)).collect();
-    Settled { ph: quantiles(phs(&paco2)), paco2_mmhg: quantiles(paco2) }
+fn settled(futures: &[Future], excesses: &[f64]) -> Settled {
+    let ph = futures.iter().zip(excesses).map(|(f, be)| (ph_at(f.settled_mmhg, *be), f.weight)).collect();
+    let paco2 = futures.iter().map(|f| (f.settled_mmhg, f.weight)).collect();
+    Settled { ph: quantiles(ph), paco2_mmhg: quantiles(paco2) }
 }
 
 fn duration(futures: &[Future], of: impl Fn(&Future) -> Option<f64>) -> Quantiles {

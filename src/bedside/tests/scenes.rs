@@ -1,5 +1,6 @@
 //! The scenes the tool is made for, and what it must be silent about. Every figure in the cases is invented.
 
+#![allow(clippy::unwrap_used)] // in a test an unwrap is an assertion
 use bedside::{Freshness, Options, Status, Study};
 use case::*;
 
@@ -10,7 +11,14 @@ fn at(minutes: f64) -> Moment {
 }
 
 fn entry(id: &str, minutes: f64, kind: EntryKind) -> Entry {
-    Entry { id: EntryId(id.into()), at: at(minutes), written_at: None, utc_offset_min: None, kind, not_understood: vec![] }
+    Entry {
+        id: EntryId(id.into()),
+        at: at(minutes),
+        written_at: None,
+        utc_offset_min: None,
+        kind,
+        not_understood: vec![],
+    }
 }
 
 fn gas(ph: f64, pco2_mmhg: f64, held: Option<f64>) -> EntryKind {
@@ -76,8 +84,15 @@ fn night_ferry_gets_three_rates_with_where_they_lead() {
         let (p, ph) = (offer.forecast.settled.paco2_mmhg, offer.forecast.settled.ph);
         println!(
             "{:.0}: {:.1} ({:.1} to {:.1}) mmHg, pH {:.2} ({:.2} to {:.2}), within 2 mmHg in {:.0} to {:.0} min, {:.1} mL/kg",
-            offer.price.rate_per_min, p.p50, p.p10, p.p90, ph.p50, ph.p10, ph.p90,
-            offer.forecast.minutes_to_within_2_mmhg.p10, offer.forecast.minutes_to_within_2_mmhg.p90,
+            offer.price.rate_per_min,
+            p.p50,
+            p.p10,
+            p.p90,
+            ph.p50,
+            ph.p10,
+            ph.p90,
+            offer.forecast.minutes_to_within_2_mmhg.p10,
+            offer.forecast.minutes_to_within_2_mmhg.p90,
             offer.price.ml_per_kg.unwrap(),
         );
         // At one tidal volume settled PaCO2 goes as 1/rate, if VCO2/(1 − VD/VT) stays.
@@ -123,10 +138,20 @@ fn a_start_not_known_to_be_settled_is_wider() {
     add(&mut unsettled, "s1", 0.0, EntryKind::Settings(passive(18.0, 340.0)));
     add(&mut unsettled, "g1", 0.0, gas(7.21, 71.0, None));
     let width = |case: &Case| {
-        let p = Study::new(case, Options::default()).forecast(&now(0.0), None, &[]).value.unwrap().settled.paco2_mmhg;
+        let p = Study::new(case, Options::default())
+            .forecast(&now(0.0), None, &[])
+            .value
+            .unwrap()
+            .settled
+            .paco2_mmhg;
         p.p90 - p.p10
     };
-    assert!(width(&unsettled) > 1.5 * width(&night_ferry()), "{} {}", width(&unsettled), width(&night_ferry()));
+    assert!(
+        width(&unsettled) > 1.5 * width(&night_ferry()),
+        "{} {}",
+        width(&unsettled),
+        width(&night_ferry())
+    );
 }
 
 #[test]
@@ -161,7 +186,12 @@ fn the_number_is_questioned_at_30_and_taken_away_at_60_minutes() {
 #[test]
 fn a_gas_outside_the_band_waits_for_a_choice() {
     let mut case = night_ferry();
-    add(&mut case, "s2", 10.0, EntryKind::Settings(Settings { rate_per_min: Some(26.0), ..Settings::default() }));
+    add(
+        &mut case,
+        "s2",
+        10.0,
+        EntryKind::Settings(Settings { rate_per_min: Some(26.0), ..Settings::default() }),
+    );
     add(&mut case, "g2", 60.0, gas(7.12, 92.0, Some(50.0)));
     let study = Study::new(&case, Options::default());
     let doubt = study.doubt().expect("92 where about 50 was expected");
@@ -185,7 +215,12 @@ fn a_gas_outside_the_band_waits_for_a_choice() {
 #[test]
 fn a_gas_that_fits_narrows_the_band() {
     let mut case = night_ferry();
-    add(&mut case, "s2", 10.0, EntryKind::Settings(Settings { rate_per_min: Some(26.0), ..Settings::default() }));
+    add(
+        &mut case,
+        "s2",
+        10.0,
+        EntryKind::Settings(Settings { rate_per_min: Some(26.0), ..Settings::default() }),
+    );
     let settled = |case: &Case| {
         Study::new(case, Options::default()).forecast(&now(70.0), None, &[]).value.unwrap().settled.paco2_mmhg
     };
@@ -212,7 +247,12 @@ fn airflow_obstruction_gets_no_faster_rate() {
 #[test]
 fn conflicting_conditions_get_no_list() {
     let mut case = night_ferry();
-    add(&mut case, "c", -40.0, EntryKind::Condition { name: Condition::RaisedIntracranialPressure, present: true });
+    add(
+        &mut case,
+        "c",
+        -40.0,
+        EntryKind::Condition { name: Condition::RaisedIntracranialPressure, present: true },
+    );
     add(&mut case, "d", -40.0, EntryKind::Condition { name: Condition::LungInjury, present: true });
     let offers = Study::new(&case, Options::default()).offers(&now(5.0)).value.unwrap();
     assert!(offers.offers.is_empty() && offers.fewer_because[0].words.ends_with("Call for advice."));
@@ -231,7 +271,13 @@ fn an_unticked_retainer_is_asked_about_and_not_blown_past_his_ph() {
     assert!(offers.offers.iter().all(|o| o.forecast.settled.ph.p90 <= 7.45));
     assert!(offers.fewer_because.iter().any(|c| c.id == "retainer_question"));
     case = night_ferry();
-    assert!(Study::new(&case, Options::default()).offers(&now(5.0)).cautions.iter().all(|c| c.id != "retainer_question"));
+    assert!(
+        Study::new(&case, Options::default())
+            .offers(&now(5.0))
+            .cautions
+            .iter()
+            .all(|c| c.id != "retainer_question")
+    );
 }
 
 #[test]
@@ -333,4 +379,15 @@ fn a_breath_in_the_dead_space_is_withheld_not_nonsense() {
     let answer = Study::new(&case, Options::default()).forecast(&now(5.0), None, &[0.0]);
     assert_eq!(answer.standing.status, Status::Withheld);
     assert_eq!(answer.standing.withheld[0].id, "breath_in_dead_space");
+}
+
+#[test]
+fn an_entry_that_could_hide_a_change_silences_it() {
+    for (kind, silent) in [("circulation", true), ("gas", true), ("horoscope", false)] {
+        let mut case = night_ferry();
+        add(&mut case, "x", 5.0, EntryKind::NotUnderstood(NotUnderstood { kind: kind.into() }));
+        let answer = Study::new(&case, Options::default()).forecast(&now(6.0), None, &[0.0]);
+        assert_eq!(answer.value.is_none(), silent, "{kind}");
+        assert!(answer.cautions.iter().any(|c| c.id == "not_understood"));
+    }
 }

@@ -16,33 +16,44 @@ pub(crate) struct Pool {
     pub blood_l: f64,
 }
 
+/// Where a pool's pressure stands, with what hangs on it: x = √PCO2, F(x), and the slopes of F and of the
+/// amount against x.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(crate) struct Level {
+    pub x: f64,
+    pub content: f64,
+    pub content_slope: f64,
+    pub amount_slope: f64,
+}
+
 impl Pool {
-    /// Amount and its slope against x.
+    /// The amount at x, and the level there.
     #[inline]
-    pub fn amount(&self, x: f64, chemistry: &Chemistry) -> (f64, f64) {
-        let (f, slope) = chemistry.at(x);
-        (
-            self.squared * x * x + self.root * x + self.blood_l * f,
-            2.0 * self.squared * x + self.root + self.blood_l * slope,
-        )
+    pub fn at(&self, x: f64, chemistry: &Chemistry) -> (f64, Level) {
+        let (content, content_slope) = chemistry.at(x);
+        let amount = self.squared * x * x + self.root * x + self.blood_l * content;
+        let amount_slope = 2.0 * self.squared * x + self.root + self.blood_l * content_slope;
+        (amount, Level { x, content, content_slope, amount_slope })
     }
 
-    /// The x at which the pool holds `amount`. It rises and is nearly straight: Newton from the last x.
+    /// The level at which the pool holds `amount`, `more` above what it held at `near`. It rises and is nearly
+    /// straight: Newton, the first step from what is known of `near`. After a step under `DONE` the rest is
+    /// its square, so the last correction is made straight on.
     #[inline]
-    pub fn root_for(&self, amount: f64, guess_x: f64, chemistry: &Chemistry) -> f64 {
+    pub fn level_for(&self, amount: f64, more: f64, near: &Level, chemistry: &Chemistry) -> Level {
         const STEPS: usize = 12;
-        const DONE: f64 = 1e-11;
-        let mut x = guess_x;
+        const DONE: f64 = 1e-5;
+        let positive = |next: f64, x: f64| if next > 0.0 { next } else { 0.5 * x };
+        let mut x = positive(near.x + more / near.amount_slope, near.x);
         for _ in 0..STEPS {
-            let (held, slope) = self.amount(x, chemistry);
-            let next = x - (held - amount) / slope;
-            let moved = (next - x).abs();
-            x = if next > 0.0 { next } else { 0.5 * x };
-            if moved < DONE {
-                break;
+            let (held, level) = self.at(x, chemistry);
+            let by = (amount - held) / level.amount_slope;
+            if by.abs() < DONE {
+                return Level { x: x + by, content: level.content + level.content_slope * by, ..level };
             }
+            x = positive(x + by, x);
         }
-        x
+        self.at(x, chemistry).1
     }
 }
 
@@ -74,8 +85,8 @@ pub struct State {
     pub(crate) amounts: [f64; 3],
     /// mL STPD breathed out so far.
     pub(crate) exhaled: f64,
-    /// √PCO2 of each pool, the inverse of the amounts.
-    pub(crate) roots: [f64; 3],
+    /// Where each pool's pressure stands: the inverse of the amounts.
+    pub(crate) levels: [Level; 3],
 }
 
 /// What drives the body over a stretch of time.
@@ -111,20 +122,12 @@ impl Body {
         let tissue = |made: f64, flow: f64, offset: f64| {
             chemistry.root_at_content(arterial + production_ml_min * made / flow - offset, lung_x)
         };
-        let roots = [
-            lung_x,
-            tissue(self.made_fast, self.flow_fast, self.offset_fast),
-            tissue(1.0 - self.made_fast, self.flow_slow, self.offset_slow),
-        ];
-        State {
-            amounts: [
-                self.lung.amount(roots[0], chemistry).0,
-                self.fast.amount(roots[1], chemistry).0,
-                self.slow.amount(roots[2], chemistry).0,
-            ],
-            exhaled: 0.0,
-            roots,
-        }
+        let (lung, lung_level) = self.lung.at(lung_x, chemistry);
+        let (fast, fast_level) =
+            self.fast.at(tissue(self.made_fast, self.flow_fast, self.offset_fast), chemistry);
+        let (slow, slow_level) =
+            self.slow.at(tissue(1.0 - self.made_fast, self.flow_slow, self.offset_slow), chemistry);
+        State { amounts: [lung, fast, slow], exhaled: 0.0, levels: [lung_level, fast_level, slow_level] }
     }
 }
 
@@ -132,7 +135,7 @@ impl State {
     /// PaCO2, mmHg.
     #[must_use]
     pub fn paco2_mmhg(&self) -> f64 {
-        self.roots[0] * self.roots[0]
+        self.levels[0].x * self.levels[0].x
     }
 
     /// All the CO2 in the pools and breathed out, mL STPD: it grows by what is made and by nothing else.

@@ -55,8 +55,10 @@ pub struct Chemistry {
     input: ChemistryInput,
     first_x: f64,
     step_x: f64,
-    content: Vec<f64>,
-    slope: Vec<f64>,
+    /// Cubic coefficients of F in the place inside each interval, which runs from 0 to 1.
+    cubics: Vec<[f64; 4]>,
+    /// F and its slope against x at the end of the table.
+    end: (f64, f64),
     haldane_ml_l: f64,
     held: bool,
 }
@@ -91,7 +93,23 @@ impl Chemistry {
             ph_at(s::PRESSURE_LEAST.value, input.standard_be),
         );
         let held = edge(ph_ends.0) != ContentEdge::Inside || edge(ph_ends.1) != ContentEdge::Inside;
-        Ok(Self { haldane_ml_l: haldane(&input), input, first_x, step_x, content, slope, held })
+        let cubics = content
+            .windows(2)
+            .zip(slope.windows(2))
+            .map(|(y, d)| {
+                let (d0, d1, rise) = (d[0] * step_x, d[1] * step_x, y[1] - y[0]);
+                [y[0], d0, 3.0 * rise - 2.0 * d0 - d1, d0 + d1 - 2.0 * rise]
+            })
+            .collect();
+        Ok(Self {
+            haldane_ml_l: haldane(&input),
+            input,
+            first_x,
+            step_x,
+            cubics,
+            end: (total, previous),
+            held,
+        })
     }
 
     /// What the curve was made from.
@@ -116,21 +134,17 @@ impl Chemistry {
     #[inline]
     pub(crate) fn at(&self, x: f64) -> (f64, f64) {
         let place = (x - self.first_x) / self.step_x;
-        let last = self.content.len() - 1;
         if place.is_nan() || place <= 0.0 {
-            return (self.content[0] + self.slope[0] * (x - self.first_x), self.slope[0]);
+            let [_, d, _, _] = self.cubics[0];
+            return (d * place, d / self.step_x);
         }
         let i = place as usize;
-        if i >= last {
-            let end_x = self.first_x + self.step_x * last as f64;
-            return (self.content[last] + self.slope[last] * (x - end_x), self.slope[last]);
-        }
+        let Some([y, d, c2, c3]) = self.cubics.get(i) else {
+            let beyond = (place - self.cubics.len() as f64) * self.step_x;
+            return (self.end.0 + self.end.1 * beyond, self.end.1);
+        };
         let t = place - i as f64;
-        let (y0, y1) = (self.content[i], self.content[i + 1]);
-        let (d0, d1) = (self.slope[i] * self.step_x, self.slope[i + 1] * self.step_x);
-        let c2 = 3.0 * (y1 - y0) - 2.0 * d0 - d1;
-        let c3 = 2.0 * (y0 - y1) + d0 + d1;
-        (y0 + t * (d0 + t * (c2 + t * c3)), (d0 + t * (2.0 * c2 + 3.0 * t * c3)) / self.step_x)
+        (y + t * (d + t * (c2 + t * c3)), (d + t * (2.0 * c2 + 3.0 * t * c3)) / self.step_x)
     }
 
     /// F in mL STPD/L against 4 mmHg, at a PCO2 in mmHg.

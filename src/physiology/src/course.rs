@@ -2,7 +2,7 @@
 
 use crate::Chemistry;
 use crate::body::{Body, Drive, State};
-use crate::stepper::{moments, paco2_rate, step};
+use crate::stepper::{moments, rates, step};
 
 /// A drive from a minute on.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -65,15 +65,15 @@ impl Course {
         refine: u32,
     ) {
         let moments = moments(span_min.0, span_min.1, refine);
-        let rate = paco2_rate(body, drive, &self.end, chemistry);
+        let mut here = rates(body, drive, &self.end.levels);
         match self.rate_after.last_mut() {
-            Some(after) => *after = rate,
-            None => self.push(moments[0], self.end.paco2_mmhg(), rate),
+            Some(after) => *after = here.paco2,
+            None => self.push(moments[0], self.end.paco2_mmhg(), here.paco2),
         }
         for pair in moments.windows(2) {
-            self.end = step(body, drive, &self.end, pair[1] - pair[0], chemistry);
-            let rate = paco2_rate(body, drive, &self.end, chemistry);
-            self.push(pair[1], self.end.paco2_mmhg(), rate);
+            self.end = step(body, drive, &self.end, &here, pair[1] - pair[0], chemistry);
+            here = rates(body, drive, &self.end.levels);
+            self.push(pair[1], self.end.paco2_mmhg(), here.paco2);
         }
     }
 

@@ -1,5 +1,6 @@
-//! Learning from gases: the most likely body by Gauss–Newton, then members drawn around it, each weighed
-//! once by how well it fits. Members are never resampled: with a few gases that collapses onto a handful.
+//! Learning from gases: the most likely body by Gauss–Newton, then members drawn around it, each weighed by
+//! how well it fits. Where too few carry the weight the proposal is matched to what they found and all are
+//! drawn and weighed anew. Members are never resampled: with a few gases that collapses onto a handful.
 
 use libm::{exp, log, sqrt};
 use sources as s;
@@ -7,6 +8,7 @@ use sources as s;
 use crate::draws::standard_normals;
 use crate::linear::{backward, cholesky, forward};
 use crate::priors::{JUMP_FIRST, Member, Priors, Step};
+use crate::proposal::Proposal;
 use crate::{Chemistry, Course};
 
 /// Gauss–Newton stops after this many passes.
@@ -15,8 +17,15 @@ const PASSES: usize = 4;
 /// Longest step of a pass, in standard deviations of the prior: farther the model is no longer straight.
 const LONGEST_STEP: f64 = 3.0;
 
-/// A pass that moves less than this, in standard deviations, changes no answer.
-const STEP_DONE: f64 = 1e-4;
+/// A pass that moves less than this, in standard deviations, is the last: members are weighed by what they
+/// truly fit, so the mode need not be exact.
+const STEP_DONE: f64 = 0.02;
+
+/// Times that the proposal is matched to what the members found, at most.
+const MATCHES: usize = 2;
+
+/// Share of effective members that needs no better proposal.
+const ENOUGH: f64 = 0.5;
 
 /// Difference for the slopes, in standard deviations: large against rounding, small against curvature.
 const DIFFERENCE: f64 = 1e-3;
@@ -83,27 +92,56 @@ impl Learning<'_> {
         let (mode, root) = self.mode()?;
         let n = mode.len();
         let draws = standard_normals(members, n + EXTRA, seed);
-        let mut drawn = Vec::with_capacity(members);
-        let mut log_weights = Vec::with_capacity(members);
-        let mut extra = Vec::with_capacity(members);
-        for row in &draws {
-            let (xi, rest) = row.split_at(n);
-            let offset = backward(&root, xi);
-            let u: Vec<f64> =
-                mode.iter().zip(&offset).map(|(m, o)| m + s::PROPOSAL_SPREAD.value * o).collect();
+        let informed = informed(&root);
+        let mut cloud = self.cloud(&Proposal::around_mode(&informed), (&mode, &root), &draws)?;
+        for _ in 0..MATCHES {
+            if cloud.effective >= ENOUGH * members as f64 {
+                break;
+            }
+            let Some(proposal) =
+                Proposal::matching(&cloud.points, &cloud.weights, cloud.effective, &informed)
+            else {
+                break;
+            };
+            let next = self.cloud(&proposal, (&mode, &root), &draws)?;
+            if next.effective <= cloud.effective {
+                break;
+            }
+            cloud = next;
+        }
+        let quarter = 0.25 * members as f64;
+        let least = if quarter < s::MEMBERS_LEAST.value { quarter } else { s::MEMBERS_LEAST.value };
+        if cloud.effective < least {
+            return Err(NoMode::TooFew(cloud.effective as usize));
+        }
+        let extra = draws.iter().map(|row| [row[n], row[n + 1], row[n + 2]]).collect();
+        let Cloud { members, weights, effective, .. } = cloud;
+        Ok(Ensemble { members, weights, extra, chemistry: self.chemistry.clone(), effective })
+    }
+
+    /// Members drawn from `proposal` (in the axes of the mode's curvature), each weighed once.
+    fn cloud(
+        &self,
+        proposal: &Proposal,
+        mode: (&[f64], &[Vec<f64>]),
+        draws: &[Vec<f64>],
+    ) -> Result<Cloud, NoMode> {
+        let n = mode.0.len();
+        let mut members = Vec::with_capacity(draws.len());
+        let mut log_weights = Vec::with_capacity(draws.len());
+        let mut points = Vec::with_capacity(draws.len());
+        for row in draws {
+            let xi = &row[..n];
+            let point = proposal.point(xi);
+            let u: Vec<f64> = mode.0.iter().zip(backward(mode.1, &point)).map(|(m, o)| m + o).collect();
             let member = self.priors.member(&u, Some(self.chemistry));
-            let fit = self.residuals(&u, &member);
-            log_weights.push(0.5 * (square(xi) - square(&fit)));
-            drawn.push(member);
-            extra.push([rest[0], rest[1], rest[2]]);
+            log_weights.push(0.5 * (square(xi) - square(&self.residuals(&u, &member))));
+            members.push(member);
+            points.push(point);
         }
         let weights = normalised(&log_weights).ok_or(NoMode::Singular)?;
         let effective = 1.0 / square(&weights);
-        let least = s::MEMBERS_LEAST.value.min(0.25 * members as f64);
-        if effective < least {
-            return Err(NoMode::TooFew(effective as usize));
-        }
-        Ok(Ensemble { members: drawn, weights, extra, chemistry: self.chemistry.clone(), effective })
+        Ok(Cloud { members, weights, points, effective })
     }
 
     /// The most likely point and the Cholesky factor of the curvature there.
@@ -142,15 +180,11 @@ impl Learning<'_> {
         };
         let here = residual([(0, 0.0), (0, 0.0)]);
         let d = BEND_DIFFERENCE;
-        for i in 0..u.len().min(JUMP_FIRST) {
-            for j in 0..=i {
-                let bend = residual([(i, d), (j, d)]) - residual([(i, d), (j, -d)]) - residual([(i, -d), (j, d)])
-                    + residual([(i, -d), (j, -d)]);
-                let added = here * bend / (4.0 * d * d);
-                curvature[i][j] += added;
-                if i != j {
-                    curvature[j][i] += added;
-                }
+        for (i, row) in curvature.iter_mut().enumerate().take(JUMP_FIRST) {
+            for (j, cell) in row.iter_mut().enumerate().take(JUMP_FIRST) {
+                let same = residual([(i, d), (j, d)]) + residual([(i, -d), (j, -d)]);
+                let crossed = residual([(i, d), (j, -d)]) + residual([(i, -d), (j, d)]);
+                *cell += here * (same - crossed) / (4.0 * d * d);
             }
         }
     }
@@ -188,6 +222,24 @@ impl Learning<'_> {
         }
         residuals
     }
+}
+
+/// Which coordinates the gases say something about: where the curvature differs from the prior's own, 1.
+fn informed(root: &[Vec<f64>]) -> Vec<bool> {
+    /// Less than this is rounding of the slopes.
+    const NOTHING: f64 = 1e-6;
+    let n = root.len();
+    let touched =
+        |i: usize| (0..n).any(|k| k != i && (root[i][k].abs() > NOTHING || root[k][i].abs() > NOTHING));
+    (0..n).map(|i| (root[i][i] - 1.0).abs() > NOTHING || touched(i)).collect()
+}
+
+/// Members of one proposal.
+struct Cloud {
+    members: Vec<Member>,
+    weights: Vec<f64>,
+    points: Vec<Vec<f64>>,
+    effective: f64,
 }
 
 fn square(values: &[f64]) -> f64 {

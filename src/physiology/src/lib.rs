@@ -13,6 +13,7 @@ mod linear;
 mod normal;
 mod person;
 mod priors;
+mod proposal;
 mod quantile;
 mod saturation;
 mod stepper;

@@ -215,17 +215,34 @@ impl Priors {
         self.member(&vec![0.0; self.dimensions()], None).alveolar_share_of(&first)
     }
 
-    /// Alveolar ventilation over that of the first step, at the means and without a jump: for the size of jumps.
+    /// Spread of the jump of ln R between two steps: the whole of it from a ratio of alveolar ventilations of
+    /// 1.4 on, less for less, none where nobody breathes.
     #[must_use]
-    pub fn alveolar_ventilation_at_means(&self, step: &Step) -> f64 {
+    pub fn jump_sd(&self, before: &Step, after: &Step) -> f64 {
         let member = self.member(&vec![0.0; self.dimensions()], None);
-        member.alveolar_l_min(step, 0.0)
+        let (old, new) = (member.alveolar_l_min(before, 0.0), member.alveolar_l_min(after, 0.0));
+        if old <= 0.0 || new <= 0.0 {
+            return 0.0;
+        }
+        let size = log(new / old).abs() / log(s::JUMP_FULL_AT.value);
+        s::JUMP.spread * if size < 1.0 { size } else { 1.0 }
     }
 
     /// The body at the middle of every prior.
     #[must_use]
     pub fn at_means(&self, chemistry: &Chemistry) -> Member {
         self.member(&vec![0.0; self.dimensions()], Some(chemistry))
+    }
+
+    /// The body at a point whose every coordinate is drawn from its prior: for simulated patients. Here the
+    /// first is the production's own normal, and is turned into ln R.
+    #[must_use]
+    pub fn drawn(&self, normals: &[f64], chemistry: &Chemistry) -> Member {
+        let mut u = normals.to_vec();
+        u[RATIO] = 0.0;
+        // ln production moves one for one with ln R, in the same standard deviations.
+        u[RATIO] = normals[RATIO] - self.member(&u, None).production_residual;
+        self.member(&u, Some(chemistry))
     }
 
     /// The body at `u`. With a chemistry the Haldane offsets are set, without one they are 0.

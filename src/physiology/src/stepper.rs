@@ -3,7 +3,7 @@
 //! Sums of amounts are kept to rounding, since every row of the exchange has its counterpart.
 
 use crate::Chemistry;
-use crate::body::{Body, Drive, Pool, State};
+use crate::body::{Body, Drive, Level, State};
 
 /// γ = 1 − 1/√2: L-stable, and the smaller error of the two that are.
 const GAMMA: f64 = 1.0 - core::f64::consts::FRAC_1_SQRT_2;
@@ -13,9 +13,6 @@ const FIRST_STEP_MIN: f64 = 0.02;
 
 /// Each step over the one before: chosen so that halving every step moves PaCO2 by under 0.01 mmHg.
 const GROWTH: f64 = 1.06;
-
-/// Longest step, min: long after a change nothing fast is left, and the method damps what is.
-const LONGEST_STEP_MIN: f64 = 40.0;
 
 /// The moments from `from_min` to `to_min`, both in it, small steps first. The same for every member.
 /// `refine` divides every step, for the check that the result does not depend on them.
@@ -30,13 +27,14 @@ pub(crate) fn moments(from_min: f64, to_min: f64, refine: u32) -> Vec<f64> {
             moments.push(if last { next } else { at + (next - at) * f64::from(part) / f64::from(refine) });
         }
         at = next;
-        step = if step * GROWTH < LONGEST_STEP_MIN { step * GROWTH } else { LONGEST_STEP_MIN };
+        // Without an end: long after a change nothing fast is left, and the method damps what is.
+        step *= GROWTH;
     }
     moments
 }
 
 /// Rates of change and the parts of the Jacobian that are not zero.
-struct Rates {
+pub(crate) struct Rates {
     lung: f64,
     fast: f64,
     slow: f64,
@@ -47,35 +45,33 @@ struct Rates {
     fast_out: f64,
     slow_out: f64,
     washed: f64,
+    /// Of PaCO2, mmHg/min.
+    pub paco2: f64,
 }
 
+/// The rates at `levels`.
 #[inline]
-fn rates(body: &Body, drive: &Drive, roots: &[f64; 3], chemistry: &Chemistry) -> Rates {
-    let pool = |p: &Pool, x: f64| {
-        let (f, slope) = chemistry.at(x);
-        (
-            f,
-            slope / (2.0 * p.squared * x + p.root + p.blood_l * slope),
-            2.0 * p.squared * x + p.root + p.blood_l * slope,
-        )
-    };
-    let (lung_f, lung_df, lung_slope) = pool(&body.lung, roots[0]);
-    let (fast_f, fast_df, _) = pool(&body.fast, roots[1]);
-    let (slow_f, slow_df, _) = pool(&body.slow, roots[2]);
-    let from_fast = body.flow_fast * (fast_f + body.offset_fast - lung_f);
-    let from_slow = body.flow_slow * (slow_f + body.offset_slow - lung_f);
+pub(crate) fn rates(body: &Body, drive: &Drive, levels: &[Level; 3]) -> Rates {
+    let [lung, fast, slow] = levels;
+    let from_fast = body.flow_fast * (fast.content + body.offset_fast - lung.content);
+    let from_slow = body.flow_slow * (slow.content + body.offset_slow - lung.content);
     let washout = drive.washout();
-    let exhaled = washout * roots[0] * roots[0];
+    let exhaled = washout * lung.x * lung.x;
+    let lung_rate = from_fast + from_slow - exhaled;
+    let per_amount = |level: &Level| level.content_slope / level.amount_slope;
+    let lung_per_amount = per_amount(lung);
+    let pressure_per_amount = 2.0 * lung.x / lung.amount_slope;
     Rates {
-        lung: from_fast + from_slow - exhaled,
+        lung: lung_rate,
         fast: drive.production_ml_min * body.made_fast - from_fast,
         slow: drive.production_ml_min * (1.0 - body.made_fast) - from_slow,
         exhaled,
-        lung_to_fast: body.flow_fast * lung_df,
-        lung_to_slow: body.flow_slow * lung_df,
-        fast_out: body.flow_fast * fast_df,
-        slow_out: body.flow_slow * slow_df,
-        washed: washout * 2.0 * roots[0] / lung_slope,
+        lung_to_fast: body.flow_fast * lung_per_amount,
+        lung_to_slow: body.flow_slow * lung_per_amount,
+        fast_out: body.flow_fast * per_amount(fast),
+        slow_out: body.flow_slow * per_amount(slow),
+        washed: washout * pressure_per_amount,
+        paco2: pressure_per_amount * lung_rate,
     }
 }
 
@@ -95,42 +91,48 @@ fn solve(r: &Rates, g: f64, right: [f64; 4]) -> [f64; 4] {
     [lung, fast, slow, right[3] + g * r.washed * lung]
 }
 
-fn roots_of(body: &Body, amounts: &[f64; 3], near: &[f64; 3], chemistry: &Chemistry) -> [f64; 3] {
+/// The levels after amounts moved by `more`.
+#[inline]
+fn levels_for(
+    body: &Body,
+    amounts: &[f64; 3],
+    more: &[f64; 3],
+    near: &[Level; 3],
+    chemistry: &Chemistry,
+) -> [Level; 3] {
     [
-        body.lung.root_for(amounts[0], near[0], chemistry),
-        body.fast.root_for(amounts[1], near[1], chemistry),
-        body.slow.root_for(amounts[2], near[2], chemistry),
+        body.lung.level_for(amounts[0], more[0], &near[0], chemistry),
+        body.fast.level_for(amounts[1], more[1], &near[1], chemistry),
+        body.slow.level_for(amounts[2], more[2], &near[2], chemistry),
     ]
 }
 
-/// One step of `h` minutes.
+/// One step of `h` minutes from `state`, where the rates are `here`.
 #[inline]
-pub(crate) fn step(body: &Body, drive: &Drive, state: &State, h: f64, chemistry: &Chemistry) -> State {
+pub(crate) fn step(
+    body: &Body,
+    drive: &Drive,
+    state: &State,
+    here: &Rates,
+    h: f64,
+    chemistry: &Chemistry,
+) -> State {
     let g = GAMMA * h;
-    let here = rates(body, drive, &state.roots, chemistry);
-    let k1 = solve(&here, g, [here.lung, here.fast, here.slow, here.exhaled]);
-    let ahead = [state.amounts[0] + h * k1[0], state.amounts[1] + h * k1[1], state.amounts[2] + h * k1[2]];
-    let ahead_roots = roots_of(body, &ahead, &state.roots, chemistry);
-    let there = rates(body, drive, &ahead_roots, chemistry);
+    let k1 = solve(here, g, [here.lung, here.fast, here.slow, here.exhaled]);
+    let first = [h * k1[0], h * k1[1], h * k1[2]];
+    let ahead = [state.amounts[0] + first[0], state.amounts[1] + first[1], state.amounts[2] + first[2]];
+    let ahead_levels = levels_for(body, &ahead, &first, &state.levels, chemistry);
+    let there = rates(body, drive, &ahead_levels);
     let right = [
         there.lung - 2.0 * k1[0],
         there.fast - 2.0 * k1[1],
         there.slow - 2.0 * k1[2],
         there.exhaled - 2.0 * k1[3],
     ];
-    let k2 = solve(&here, g, right);
-    let moved = |i: usize| h * (1.5 * k1[i] + 0.5 * k2[i]);
-    let amounts = [state.amounts[0] + moved(0), state.amounts[1] + moved(1), state.amounts[2] + moved(2)];
-    State {
-        roots: roots_of(body, &amounts, &ahead_roots, chemistry),
-        amounts,
-        exhaled: state.exhaled + moved(3),
-    }
-}
-
-/// Rate of change of PaCO2, mmHg/min.
-#[inline]
-pub(crate) fn paco2_rate(body: &Body, drive: &Drive, state: &State, chemistry: &Chemistry) -> f64 {
-    let slope = body.lung.amount(state.roots[0], chemistry).1;
-    2.0 * state.roots[0] * rates(body, drive, &state.roots, chemistry).lung / slope
+    let k2 = solve(here, g, right);
+    let second = |i: usize| 0.5 * h * (k1[i] + k2[i]);
+    let more = [second(0), second(1), second(2)];
+    let amounts = [ahead[0] + more[0], ahead[1] + more[1], ahead[2] + more[2]];
+    let levels = levels_for(body, &amounts, &more, &ahead_levels, chemistry);
+    State { levels, amounts, exhaled: state.exhaled + h * k1[3] + second(3) }
 }

@@ -1,0 +1,12 @@
+//! State of the whole app, owned by the root: the book, the open case and its study, what is being typed.
+
+pub mod app;
+pub mod choice;
+pub mod demo;
+pub mod draft;
+pub mod field;
+pub mod outlook;
+pub mod room;
+pub mod rows;
+pub mod sheet;
+pub mod writing;
