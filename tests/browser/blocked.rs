@@ -23,7 +23,8 @@ fn without_webassembly() {
 #[test]
 fn without_storage() {
     // 2 is "block": what a user chooses under site data, and what private windows of some browsers do.
-    let setup = Setup::default().size(320, 640).preference("profile.default_content_setting_values.cookies", 2);
+    let setup =
+        Setup::default().size(320, 640).preference("profile.default_content_setting_values.cookies", 2);
     setup.run(|world| async move {
         says(&world.phone, "lets the page store nothing").await?;
         world.phone.wait_for_state("offline", "unsupported").await
@@ -32,7 +33,8 @@ fn without_storage() {
 
 #[test]
 fn without_scripts() {
-    let setup = Setup::default().size(320, 640).preference("profile.default_content_setting_values.javascript", 2);
+    let setup =
+        Setup::default().size(320, 640).preference("profile.default_content_setting_values.javascript", 2);
     setup.run(|world| async move {
         says(&world.phone, "it needs JavaScript").await?;
         assert!(!world.phone.text().await?.contains("Starting."), "nothing claims that it is starting");
@@ -51,31 +53,31 @@ fn without_script_modules() {
 
 #[test]
 fn before_any_script_has_arrived() {
-    Setup::default().prepare(|site| site.lose(&site.asset("boot", "js")?)).run(|world| async move {
-        says(&world.phone, "the page did not arrive whole: load it again").await
-    });
+    Setup::default()
+        .prepare(|site| site.lose(&site.asset("boot", "js")?))
+        .run(|world| async move { says(&world.phone, "the page did not arrive whole: load it again").await });
 }
 
 #[test]
 fn when_the_program_did_not_arrive() {
-    Setup::default().prepare(|site| site.lose(&site.asset("app", "wasm")?)).run(|world| async move {
-        says(&world.phone, "The program did not arrive whole").await
-    });
+    Setup::default()
+        .prepare(|site| site.lose(&site.asset("app", "wasm")?))
+        .run(|world| async move { says(&world.phone, "The program did not arrive whole").await });
 }
 
 #[test]
 fn when_the_glue_did_not_arrive() {
-    Setup::default().prepare(|site| site.lose(&site.asset("app", "js")?)).run(|world| async move {
-        says(&world.phone, "The program did not arrive whole").await
-    });
+    Setup::default()
+        .prepare(|site| site.lose(&site.asset("app", "js")?))
+        .run(|world| async move { says(&world.phone, "The program did not arrive whole").await });
 }
 
 #[test]
 fn when_the_program_is_damaged() {
     let damage = |site: &SiteCopy| site.replace(&site.asset("app", "wasm")?, b"\0asm\x01\0\0\0half");
-    Setup::default().prepare(damage).run(|world| async move {
-        says(&world.phone, "The program did not arrive whole").await
-    });
+    Setup::default()
+        .prepare(damage)
+        .run(|world| async move { says(&world.phone, "The program did not arrive whole").await });
 }
 
 /// A module whose start function is one `unreachable`, the instruction a panic ends in.
@@ -83,7 +85,8 @@ const DIES: &[u8] = b"\0asm\x01\0\0\0\x01\x04\x01\x60\0\0\x03\x02\x01\0\x08\x01\
 
 #[test]
 fn when_the_program_dies_at_its_start() {
-    let setup = Setup::default().size(320, 640).prepare(|site| site.replace(&site.asset("app", "wasm")?, DIES));
+    let setup =
+        Setup::default().size(320, 640).prepare(|site| site.replace(&site.asset("app", "wasm")?, DIES));
     setup.run(|world| async move {
         let phone = &world.phone;
         // A record written in an earlier, better hour.
@@ -106,7 +109,9 @@ fn when_the_program_dies_at_its_start() {
 fn when_the_program_dies_later() {
     // A script of the site's own (a driver's script is no part of the page) that dies as a handler of the program would.
     let add_script = |site: &SiteCopy| {
-        let script = format!("setTimeout(() => new WebAssembly.Instance(new WebAssembly.Module(new Uint8Array({DIES:?}))));");
+        let script = format!(
+            "setTimeout(() => new WebAssembly.Instance(new WebAssembly.Module(new Uint8Array({DIES:?}))));"
+        );
         site.replace(&site.folder().join("assets/dies.js"), script.as_bytes())
     };
     Setup::default().size(320, 640).prepare(add_script).run(|world| async move {
@@ -137,7 +142,10 @@ fn an_ordinary_error_of_a_script_does_not_stop_the_program() {
     Setup::default().run(|world| async move {
         world.phone.open("").await?;
         world.phone.wait_until_started().await?;
-        world.phone.script("dispatchEvent(new ErrorEvent('error', { error: new Error('an extension') }))", vec![]).await?;
+        world
+            .phone
+            .script("dispatchEvent(new ErrorEvent('error', { error: new Error('an extension') }))", vec![])
+            .await?;
         assert!(!world.phone.text().await?.contains("Slackwater has stopped"));
         Ok(())
     });

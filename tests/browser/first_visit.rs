@@ -67,7 +67,10 @@ fn can_be_installed() {
         phone.wait_for_state("offline", "ready").await?;
         let manifest = phone.command("Page.getAppManifest", json!({})).await?;
         assert_eq!(manifest["errors"], json!([]));
-        assert!(manifest["url"].as_str().is_some_and(|url| url.ends_with("/manifest.webmanifest")), "{manifest}");
+        assert!(
+            manifest["url"].as_str().is_some_and(|url| url.ends_with("/manifest.webmanifest")),
+            "{manifest}"
+        );
         let errors = phone.command("Page.getInstallabilityErrors", json!({})).await?;
         assert_eq!(errors["installabilityErrors"], json!([]));
         Ok(())
@@ -89,7 +92,9 @@ fn one_lost_file_is_not_called_ready_until_it_came_after_all() {
 #[test]
 fn a_file_with_other_bytes_is_not_kept() {
     Setup::default()
-        .prepare(|site| site.replace(&site.asset("buoy", "svg")?, b"<svg xmlns='http://www.w3.org/2000/svg'/>"))
+        .prepare(|site| {
+            site.replace(&site.asset("buoy", "svg")?, b"<svg xmlns='http://www.w3.org/2000/svg'/>")
+        })
         .run(|world| async move {
             let phone = &world.phone;
             phone.open("").await?;
@@ -97,7 +102,11 @@ fn a_file_with_other_bytes_is_not_kept() {
             sleep(Duration::from_secs(2)).await;
             assert_ne!(phone.state("offline").await?.as_deref(), Some("ready"));
             let page = phone.promise("!!(await caches.match('./'))").await?;
-            assert_eq!(page, json!(false), "the page is kept last, so that half a copy is never taken for a whole one");
+            assert_eq!(
+                page,
+                json!(false),
+                "the page is kept last, so that half a copy is never taken for a whole one"
+            );
             Ok::<(), anyhow::Error>(())
         });
 }

@@ -16,7 +16,9 @@ fn the_page_loads_by_every_address_it_has() {
         world.server.stop().await?;
         world.phone.reload().await?;
         world.phone.wait_until_started().await?;
-        for address in ["", "?from=home-screen", "#/now", "#/change", "#/record", "index.html", "?a=1#/change"] {
+        for address in
+            ["", "?from=home-screen", "#/now", "#/change", "#/record", "index.html", "?a=1#/change"]
+        {
             world.phone.open("licences/away").await.ok();
             world.phone.open(address).await?;
             world.phone.wait_until_started().await?;

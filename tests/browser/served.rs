@@ -72,13 +72,23 @@ fn the_policy_is_sent_and_the_page_carries_the_same() {
     asked(async |site, server| {
         let (head, body) = server.ask("/", "").await?;
         let page = String::from_utf8(body)?;
-        let (_, rest) = page.split_once("Content-Security-Policy\" content=\"").context("the page has a policy")?;
+        let (_, rest) =
+            page.split_once("Content-Security-Policy\" content=\"").context("the page has a policy")?;
         let (own, _) = rest.split_once('"').context("the policy ends")?;
-        let sent = head.lines().find_map(|line| line.strip_prefix("content-security-policy: ")).context("is sent")?;
+        let sent = head
+            .lines()
+            .find_map(|line| line.strip_prefix("content-security-policy: "))
+            .context("is sent")?;
         assert_eq!(sent, format!("{own}; frame-ancestors 'none'"));
         assert!(own.starts_with("default-src 'none'"), "{own}");
-        assert!(!own.contains("unsafe-inline") && !own.contains("'unsafe-eval'") && !own.contains("http"), "{own}");
-        assert!(!page.contains("<style") && !page.contains(" style=") && !page.contains("<script>"), "no inline code");
+        assert!(
+            !own.contains("unsafe-inline") && !own.contains("'unsafe-eval'") && !own.contains("http"),
+            "{own}"
+        );
+        assert!(
+            !page.contains("<style") && !page.contains(" style=") && !page.contains("<script>"),
+            "no inline code"
+        );
         assert!(head.contains("x-content-type-options: nosniff"), "{head}");
         assert!(head.contains("cache-control: no-cache"), "{head}");
         let (head, _) = server.ask(&path_of(site, "app", "js")?, "").await?;
@@ -90,13 +100,18 @@ fn the_policy_is_sent_and_the_page_carries_the_same() {
 #[test]
 fn nothing_outside_the_folder_and_no_page_for_a_wrong_address() {
     asked(async |_, server| {
-        for path in ["/nowhere", "/../Cargo.toml", "/%2e%2e/Cargo.toml", "/assets/../../etc/passwd", "/assets/"] {
+        for path in
+            ["/nowhere", "/../Cargo.toml", "/%2e%2e/Cargo.toml", "/assets/../../etc/passwd", "/assets/"]
+        {
             let (head, body) = server.ask(path, "").await?;
             assert!(head.starts_with("http/1.1 4"), "{path}: {head}");
             assert!(!String::from_utf8_lossy(&body).contains("[workspace"), "{path}");
         }
         let (head, _) = server.ask("/assets/app-000000000000.js", "").await?;
-        assert!(head.starts_with("http/1.1 404") && head.contains("no-cache"), "a wrong answer must not last: {head}");
+        assert!(
+            head.starts_with("http/1.1 404") && head.contains("no-cache"),
+            "a wrong answer must not last: {head}"
+        );
         Ok(())
     });
 }

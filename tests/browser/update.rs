@@ -10,7 +10,10 @@ use tokio::time::sleep;
 async fn deploy(world: &Arc<World>, version: &str) -> Result<()> {
     world.site.next_version(version)?;
     // The next load asks for the worker again; loading twice would hide a page that changes by itself.
-    let asked = world.phone.promise("(await (await navigator.serviceWorker.getRegistration()).update(), true)").await?;
+    let asked = world
+        .phone
+        .promise("(await (await navigator.serviceWorker.getRegistration()).update(), true)")
+        .await?;
     assert_eq!(asked, json!(true));
     world.phone.wait_for_state("update", "ready").await
 }
@@ -33,7 +36,11 @@ fn it_is_offered_and_taken_only_when_asked_for() {
 
         deploy(&world, "next-version").await?;
         sleep(Duration::from_secs(2)).await;
-        assert_eq!(phone.script("return window.mark", vec![]).await?, json!(1), "the page reloaded by itself");
+        assert_eq!(
+            phone.script("return window.mark", vec![]).await?,
+            json!(1),
+            "the page reloaded by itself"
+        );
         assert_eq!(phone.state("version").await?, Some(first.clone()));
         phone.reload().await?;
         assert_eq!(phone.state("version").await?, Some(first.clone()), "a reload alone changes no version");
@@ -54,7 +61,9 @@ fn two_versions_are_kept_and_nothing_of_others_is_touched() {
         let phone = &world.phone;
         phone.open("").await?;
         phone.wait_for_state("offline", "ready").await?;
-        phone.promise("(await caches.open('slackwater:/elsewhere/:1'), await caches.open('another-program'))").await?;
+        phone
+            .promise("(await caches.open('slackwater:/elsewhere/:1'), await caches.open('another-program'))")
+            .await?;
         for version in ["second", "third"] {
             deploy(&world, version).await?;
             take(&world, version).await?;

@@ -208,7 +208,10 @@ impl Phone {
             }
             if began.elapsed() > PATIENCE {
                 let all = self.script(PAGE, vec![json!("controls")]).await?;
-                bail!("no control is called {label:?}; there are {all}; the page says {:?}", self.text().await?);
+                bail!(
+                    "no control is called {label:?}; there are {all}; the page says {:?}",
+                    self.text().await?
+                );
             }
             sleep(Duration::from_millis(50)).await;
         }

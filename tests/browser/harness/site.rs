@@ -96,7 +96,10 @@ impl SiteCopy {
         let before = self.version()?;
         let next = page.replace(&before, version);
         let worker = fs::read_to_string(&worker_path)?;
-        ensure!(worker.contains(&integrity(&page)), "the worker's digest of the page is not that of the page");
+        ensure!(
+            worker.contains(&integrity(&page)),
+            "the worker's digest of the page is not that of the page"
+        );
         let next_worker = worker.replace(&integrity(&page), &integrity(&next)).replace(&before, version);
         self.replace(&page_path, next.as_bytes())?;
         self.replace(&worker_path, next_worker.as_bytes())
