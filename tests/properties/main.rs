@@ -1,3 +1,4 @@
-//! Properties of the body that hold whatever the patient.
+//! Properties that hold whatever the patient.
 
 mod body;
+mod study;

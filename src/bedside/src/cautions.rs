@@ -62,7 +62,7 @@ fn gas_cautions(study: &Study, learnt: &Learnt, all: &mut Vec<Caution>) {
             Some(&s::METABOLIC_SBE),
         ));
     }
-    if learnt.ratio_held() {
+    if !learnt.curve_is_sure() {
         all.push(caution(
             "chemistry_edge",
             "pH outside 6.7 to 7.7: the blood's CO₂ curve is less sure here.",

@@ -1,8 +1,11 @@
 //! A case studied once an entry: the body learnt from its gases. Forecasts and offers are asked of it.
 
+use std::cell::RefCell;
+use std::rc::Rc;
+
 use case::{Case, Condition, EntryId, Moment, Now, Settings};
 use physiology::{
-    Chemistry, ChemistryInput, Ensemble, Learning, Observation, Priors, Step, saturation_in_blood,
+    Chemistry, ChemistryInput, Ensemble, Learning, Observation, Past, Priors, Step, saturation_in_blood,
     standard_base_excess,
 };
 use sources as s;
@@ -77,6 +80,8 @@ pub struct Study {
 #[derive(Debug, Clone)]
 pub(crate) struct Learnt {
     ensemble: Ensemble,
+    /// The past up to the minute last asked about: a finger on a stepper asks again and again at one minute.
+    past: RefCell<Option<(f64, Rc<Past>)>>,
     pub(crate) start: Moment,
     pub(crate) priors: Priors,
     anchor: Anchor,
@@ -187,7 +192,8 @@ impl Study {
     fn computed(&self, learnt: &Learnt, now: &Now, planned: Option<&Settings>, minutes: &[f64]) -> Forecast {
         let now_min = now.wall.minutes_since(learnt.start);
         let step = planned.and_then(|settings| self.step_under(learnt, settings, now.wall));
-        let futures = learnt.ensemble.futures(now_min + SETTLING_MIN, step.as_ref());
+        let past = learnt.past(now_min);
+        let futures = learnt.ensemble.futures(&past, now_min + SETTLING_MIN, step.as_ref());
         summary::summarise(&futures, &learnt.anchor, now_min, minutes)
     }
 
@@ -231,9 +237,10 @@ impl Study {
             return None;
         }
         let now_min = now.wall.minutes_since(learnt.start);
+        let past = learnt.past(now_min);
         let mut pairs: Vec<(f64, f64)> = learnt
             .ensemble
-            .futures(now_min, None)
+            .futures(&past, now_min, None)
             .iter()
             .map(|f| (f.settled_mmhg / s::RATIO_STEP.value, f.weight))
             .collect();
@@ -259,9 +266,20 @@ impl Study {
 }
 
 impl Learnt {
-    /// Whether the blood-to-plasma ratio is held at an edge at the last gas.
-    pub(crate) fn ratio_held(&self) -> bool {
-        self.ensemble.chemistry().ratio_held_at(self.last_gas.pco2_mmhg)
+    fn past(&self, now_min: f64) -> Rc<Past> {
+        if let Some((minute, past)) = &*self.past.borrow()
+            && *minute == now_min
+        {
+            return Rc::clone(past);
+        }
+        let past = Rc::new(self.ensemble.past(now_min));
+        *self.past.borrow_mut() = Some((now_min, Rc::clone(&past)));
+        past
+    }
+
+    /// Whether the CO2 curve is sure at the last gas.
+    pub(crate) fn curve_is_sure(&self) -> bool {
+        self.ensemble.chemistry().inside_douglas(self.last_gas.pco2_mmhg)
     }
 }
 
@@ -376,7 +394,8 @@ fn only_other_samples(history: &History) -> Option<Standing> {
 /// The doubt about `gas`, when what was learnt before it did not expect it and nobody has decided yet.
 fn doubt_about(before: &Learnt, gas: &UsableGas<'_>) -> Option<Doubt> {
     let at_min = gas.at.minutes_since(before.start);
-    let expected_mmhg = reading_95(&before.ensemble.futures(at_min, None), at_min);
+    let past = before.ensemble.past(at_min);
+    let expected_mmhg = reading_95(&before.ensemble.futures(&past, at_min, None), at_min);
     let read = gas.gas.pco2_mmhg;
     let fits = read >= expected_mmhg.0 && read <= expected_mmhg.1;
     (!fits).then(|| Doubt { gas: gas.id.clone(), at: gas.at, measured_mmhg: read, expected_mmhg })
@@ -415,6 +434,7 @@ fn learn_from(history: &History, gases: &[UsableGas<'_>], options: Options) -> R
     let (last_gas, last_gas_at) = (*last.gas, last.at);
     Ok(Learnt {
         ensemble,
+        past: RefCell::new(None),
         start,
         priors,
         anchor,

@@ -1,8 +1,7 @@
 //! From weighted members to the percentiles that are shown.
 
 use physiology::{
-    Future, hco3_mmol_l, minutes_to_share, minutes_to_within, normal_quantile, ph_at, standard_base_excess,
-    weighted_quantiles,
+    Future, hco3_mmol_l, minutes_to_share, minutes_to_within, ph_at, standard_base_excess, weighted_quantiles,
 };
 use sources as s;
 
@@ -11,9 +10,16 @@ use crate::{Band, Forecast, Quantiles, Settled};
 /// The edges of what is shown: eight times in ten between the outer two.
 const EDGES: [f64; 3] = [0.1, 0.5, 0.9];
 
-/// Each member's reading is spread over this many equal shares of the measurement error: with one draw a
-/// member the edges of a reading would be ragged.
-const ERROR_SHARES: usize = 9;
+/// Nodes and weights of the five-point Gauss–Hermite rule for a standard normal (Abramowitz, Stegun 1964, table
+/// 25.10, from memory): each member's reading is spread over them, since with one draw a member the edges of a
+/// reading would be ragged.
+const ERROR_NODES: [(f64, f64); 5] = [
+    (-2.856_970_013_872_806, 0.011_257_411_327_720_7),
+    (-1.355_626_179_974_266, 0.222_075_922_005_612_6),
+    (0.0, 0.533_333_333_333_333_3),
+    (1.355_626_179_974_266, 0.222_075_922_005_612_6),
+    (2.856_970_013_872_806, 0.011_257_411_327_720_7),
+];
 
 /// The share of the way after which "90 %" is reached.
 const NINETY_PERCENT: f64 = 0.9;
@@ -41,13 +47,14 @@ fn push(band: &mut Band, q: Quantiles) {
     band.p90.push(q.p90);
 }
 
-/// Spreads each (value, weight) over the measurement error.
+/// Spreads each (value, weight) over the measurement error, node by node: sorted pairs give sorted runs, which
+/// the sort that follows only has to merge.
 fn with_error(pairs: &[(f64, f64)], error: impl Fn(f64, f64) -> f64) -> Vec<(f64, f64)> {
-    let shares = ERROR_SHARES as f64;
-    let normals: Vec<f64> = (0..ERROR_SHARES).map(|k| normal_quantile((k as f64 + 0.5) / shares)).collect();
-    let mut spread = Vec::with_capacity(pairs.len() * ERROR_SHARES);
-    for (value, weight) in pairs {
-        spread.extend(normals.iter().map(|z| (error(*value, *z), weight / shares)));
+    let mut sorted = pairs.to_vec();
+    sorted.sort_by(|a, b| a.0.total_cmp(&b.0));
+    let mut spread = Vec::with_capacity(pairs.len() * ERROR_NODES.len());
+    for (z, share) in ERROR_NODES {
+        spread.extend(sorted.iter().map(|(value, weight)| (error(*value, z), weight * share)));
     }
     spread
 }
@@ -64,7 +71,7 @@ fn read_ph(ph: f64, z: f64) -> f64 {
 fn base_excesses(futures: &[Future], anchor: &Anchor) -> Vec<f64> {
     futures
         .iter()
-        .map(|f| standard_base_excess(read_ph(anchor.ph, -f.ph_error), f.course.paco2_at(anchor.at_min)))
+        .map(|f| standard_base_excess(read_ph(anchor.ph, -f.ph_error), f.paco2_at(anchor.at_min)))
         .collect()
 }
 
@@ -84,7 +91,7 @@ pub fn members_at(futures: &[Future], anchor: &Anchor, at_min: f64) -> Members {
 }
 
 fn members(futures: &[Future], excesses: &[f64], at_min: f64) -> Members {
-    let paco2: Vec<(f64, f64)> = futures.iter().map(|f| (f.course.paco2_at(at_min), f.weight)).collect();
+    let paco2: Vec<(f64, f64)> = futures.iter().map(|f| (f.paco2_at(at_min), f.weight)).collect();
     let ph = paco2.iter().zip(excesses).map(|((p, w), be)| (ph_at(*p, *be), *w)).collect();
     Members { paco2, ph }
 }
@@ -93,12 +100,12 @@ fn members(futures: &[Future], excesses: &[f64], at_min: f64) -> Members {
 #[must_use]
 pub fn reading_95(futures: &[Future], at_min: f64) -> (f64, f64) {
     const TAILS: [f64; 2] = [0.025, 0.975];
-    let pairs: Vec<(f64, f64)> = futures.iter().map(|f| (f.course.paco2_at(at_min), f.weight)).collect();
+    let pairs: Vec<(f64, f64)> = futures.iter().map(|f| (f.paco2_at(at_min), f.weight)).collect();
     let [low, high] = weighted_quantiles(&mut with_error(&pairs, read_paco2), TAILS);
     (low, high)
 }
 
-/// The forecast at `minutes` after `now_min`: the one place where members become percentiles.
+/// The forecast at `minutes` after `now_min`, the end of the members' past: the one place where members become percentiles.
 #[must_use]
 pub fn summarise(futures: &[Future], anchor: &Anchor, now_min: f64, minutes: &[f64]) -> Forecast {
     let excesses = base_excesses(futures, anchor);

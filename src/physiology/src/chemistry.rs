@@ -9,7 +9,7 @@ use libm::sqrt;
 use sources as s;
 
 use crate::acid_base::{LN_10, be_blood, blood_buffer, hco3_mmol_l, ph_at, ph_of_blood};
-use crate::content::{ContentEdge, blood_content_ml_l, edge};
+use crate::content::{blood_content_ml_l, inside_douglas};
 
 /// Intervals of the table, equal steps of √P: 0.1 mmHg^½ keeps the interpolation under 1e-4 mL/L.
 const INTERVALS: usize = 120;
@@ -60,7 +60,6 @@ pub struct Chemistry {
     /// F and its slope against x at the end of the table.
     end: (f64, f64),
     haldane_ml_l: f64,
-    held: bool,
 }
 
 impl Chemistry {
@@ -88,11 +87,6 @@ impl Chemistry {
             slope.push(here);
             previous = here;
         }
-        let ph_ends = (
-            ph_at(s::PRESSURE_MOST.value, input.standard_be),
-            ph_at(s::PRESSURE_LEAST.value, input.standard_be),
-        );
-        let held = edge(ph_ends.0) != ContentEdge::Inside || edge(ph_ends.1) != ContentEdge::Inside;
         let cubics = content
             .windows(2)
             .zip(slope.windows(2))
@@ -101,15 +95,7 @@ impl Chemistry {
                 [y[0], d0, 3.0 * rise - 2.0 * d0 - d1, d0 + d1 - 2.0 * rise]
             })
             .collect();
-        Ok(Self {
-            haldane_ml_l: haldane(&input),
-            input,
-            first_x,
-            step_x,
-            cubics,
-            end: (total, previous),
-            held,
-        })
+        Ok(Self { haldane_ml_l: haldane(&input), input, first_x, step_x, cubics, end: (total, previous) })
     }
 
     /// What the curve was made from.
@@ -118,10 +104,10 @@ impl Chemistry {
         self.input
     }
 
-    /// Whether the blood-to-plasma ratio is held at an edge at this PCO2 (pH outside 6.7–7.7).
+    /// Whether the blood-to-plasma ratio is Douglas' own at this PCO2 (pH 6.7–7.7) and not drawn on beyond it.
     #[must_use]
-    pub fn ratio_held_at(&self, pco2_mmhg: f64) -> bool {
-        self.held && edge(ph_at(pco2_mmhg, self.input.standard_be)) != ContentEdge::Inside
+    pub fn inside_douglas(&self, pco2_mmhg: f64) -> bool {
+        inside_douglas(ph_at(pco2_mmhg, self.input.standard_be))
     }
 
     /// CO2 that a litre of blood gains when its saturation falls by 1 at the same PCO2, mL STPD (Haldane).
@@ -228,7 +214,7 @@ mod tests {
     fn the_slopes_computed_before() {
         // Computed before this program: slope of blood CO2 content at PCO2 20/40/60/100, SO2 .97, at constant
         // base excess of the blood (Douglas 1988 with whole-blood Van Slyke). BE +8 at 20 mmHg lies above
-        // pH 7.7, where the row (13.8) runs towards the pole and the ratio is held instead: not compared.
+        // pH 7.7, where the row (13.8) runs towards the pole and ours does not: not compared.
         let rows: [(f64, f64, [f64; 4]); 5] = [
             (-22.0, 14.0, [4.5, 3.2, 2.5, 1.9]),
             (-10.0, 14.0, [6.8, 4.2, 3.1, 2.2]),
@@ -240,7 +226,7 @@ mod tests {
             let input = ChemistryInput { standard_be: be, hb_g_dl: hb, saturation: 0.97 };
             for (p, slope) in [20.0, 40.0, 60.0, 100.0].into_iter().zip(slopes) {
                 let ph = ph_of_blood(p, be, hb);
-                if edge(ph) != ContentEdge::Inside {
+                if !inside_douglas(ph) {
                     assert!(slope.is_nan(), "only the row marked so lies outside");
                     continue;
                 }

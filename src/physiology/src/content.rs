@@ -1,18 +1,7 @@
 //! CO2 content of plasma and blood (Douglas, Jones, Reed 1988, with Kelman's pK').
 
-use libm::pow;
+use libm::{exp, pow};
 use sources as s;
-
-/// Which edge of the range pH 6.7–7.7 the blood-to-plasma ratio is held at.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub enum ContentEdge {
-    /// Inside: not held.
-    Inside,
-    /// Below pH 6.7.
-    Below,
-    /// Above pH 7.7.
-    Above,
-}
 
 /// Millilitres per litre in a millilitre per decilitre.
 const ML_L_PER_ML_DL: f64 = 10.0;
@@ -31,29 +20,26 @@ pub fn plasma_content_ml_dl(pco2_mmhg: f64, ph: f64) -> f64 {
     s::DOUGLAS_MOLAR.value * s::CO2_SOLUBILITY.value * pco2_mmhg * (1.0 + pow(10.0, ph - pk))
 }
 
-/// Where `ph` lies against the range in which the ratio may be used.
-#[must_use]
-pub fn edge(ph: f64) -> ContentEdge {
-    if ph < s::DOUGLAS_PH_LEAST.value {
-        ContentEdge::Below
-    } else if ph > s::DOUGLAS_PH_MOST.value {
-        ContentEdge::Above
-    } else {
-        ContentEdge::Inside
-    }
+/// Whether the blood-to-plasma ratio is Douglas' own at `ph`: inside 6.7–7.7.
+pub(crate) fn inside_douglas(ph: f64) -> bool {
+    (s::DOUGLAS_PH_LEAST.value..=s::DOUGLAS_PH_MOST.value).contains(&ph)
 }
 
-/// CO2 content of blood over that of its plasma. Its pole at pH 8.142 makes it useless above 7.7: outside
-/// pH 6.7–7.7 the value at the edge is held, and whoever asks says so.
+/// CO2 content of blood over that of its plasma. Its pole at pH 8.142 makes the formula useless above 7.7:
+/// outside pH 6.7–7.7 the ratio goes on from the edge along its relative slope there, so that it stays positive
+/// and the content keeps a slope without a step; whoever asks says that it is less sure.
 #[must_use]
 pub fn blood_to_plasma_ratio(ph: f64, hb_g_dl: f64, saturation: f64) -> f64 {
-    let held = match edge(ph) {
-        ContentEdge::Inside => ph,
-        ContentEdge::Below => s::DOUGLAS_PH_LEAST.value,
-        ContentEdge::Above => s::DOUGLAS_PH_MOST.value,
-    };
-    1.0 - s::DOUGLAS_HB.value * hb_g_dl
-        / ((s::DOUGLAS_OXY.value - s::DOUGLAS_OXY_SLOPE.value * saturation) * (s::DOUGLAS_PH.value - held))
+    let lost =
+        s::DOUGLAS_HB.value * hb_g_dl / (s::DOUGLAS_OXY.value - s::DOUGLAS_OXY_SLOPE.value * saturation);
+    if inside_douglas(ph) {
+        return 1.0 - lost / (s::DOUGLAS_PH.value - ph);
+    }
+    let edge =
+        if ph < s::DOUGLAS_PH_LEAST.value { s::DOUGLAS_PH_LEAST.value } else { s::DOUGLAS_PH_MOST.value };
+    let from_pole = s::DOUGLAS_PH.value - edge;
+    let ratio = 1.0 - lost / from_pole;
+    ratio * exp(-lost / (from_pole * from_pole) / ratio * (ph - edge))
 }
 
 /// CO2 of blood in mL STPD/L at 37 °C; haemoglobin in g/dL, saturation 0–1.
@@ -72,5 +58,21 @@ mod tests {
         // Another implementation's own test of Douglas 1988: Hb 10, SO2 .9, PCO2 5 kPa, pH 7.4.
         assert_abs_diff_eq!(plasma_content_ml_dl(37.503, 7.4), 54.8038, epsilon = 1e-3);
         assert_abs_diff_eq!(blood_to_plasma_ratio(7.4, 10.0, 0.9), 0.867_593, epsilon = 1e-5);
+    }
+
+    #[test]
+    fn the_ratio_and_its_slope_go_over_the_edges_without_a_step() {
+        for edge in [6.7, 7.7] {
+            let ratio = |by: f64| blood_to_plasma_ratio(edge + by, 14.0, 0.97);
+            let h = 1e-6;
+            assert_abs_diff_eq!(ratio(-h), ratio(h), epsilon = 1e-5);
+            let (below, above) = ((ratio(-h) - ratio(-2.0 * h)) / h, (ratio(2.0 * h) - ratio(h)) / h);
+            assert_abs_diff_eq!(below, above, epsilon = 1e-4);
+        }
+        // Positive and falling up to a pH that no blood reaches.
+        for hb in [3.0, 25.0] {
+            assert!(blood_to_plasma_ratio(9.0, hb, 0.97) > 0.0);
+            assert!(blood_to_plasma_ratio(8.0, hb, 0.97) < blood_to_plasma_ratio(7.8, hb, 0.97));
+        }
     }
 }

@@ -5,11 +5,12 @@
 use libm::{exp, log, sqrt};
 use sources as s;
 
+use crate::Chemistry;
 use crate::draws::standard_normals;
+use crate::ensemble::{EXTRA, Ensemble};
 use crate::linear::{backward, cholesky, forward};
-use crate::priors::{JUMP_FIRST, Member, Priors, Step};
+use crate::priors::{JUMP_FIRST, Member, Priors};
 use crate::proposal::Proposal;
-use crate::{Chemistry, Course};
 
 /// Gauss–Newton stops after this many passes.
 const PASSES: usize = 4;
@@ -32,9 +33,6 @@ const DIFFERENCE: f64 = 1e-3;
 
 /// Difference for the bend: a second difference needs a longer one.
 const BEND_DIFFERENCE: f64 = 0.05;
-
-/// Draws beside the coordinates: a jump that a future change brings, the error of a pH, of a PaCO2.
-const EXTRA: usize = 3;
 
 /// A PaCO2 that was measured.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -71,17 +69,6 @@ pub enum NoMode {
     TooFew(usize),
 }
 
-/// Bodies that fit the gases, each with its weight.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Ensemble {
-    members: Vec<Member>,
-    /// Not negative, sum 1.
-    weights: Vec<f64>,
-    extra: Vec<[f64; EXTRA]>,
-    chemistry: Chemistry,
-    effective: f64,
-}
-
 impl Learning<'_> {
     /// Learns. Same seed, same bits.
     ///
@@ -114,7 +101,7 @@ impl Learning<'_> {
         if cloud.effective < least {
             return Err(NoMode::TooFew(cloud.effective as usize));
         }
-        let extra = draws.iter().map(|row| [row[n], row[n + 1], row[n + 2]]).collect();
+        let extra = draws.iter().map(|row| [row[n], row[n + 1]]).collect();
         let Cloud { members, weights, effective, .. } = cloud;
         Ok(Ensemble { members, weights, extra, chemistry: self.chemistry.clone(), effective })
     }
@@ -252,52 +239,4 @@ fn normalised(logs: &[f64]) -> Option<Vec<f64>> {
     let raw: Vec<f64> = logs.iter().map(|l| if l.is_finite() { exp(l - most) } else { 0.0 }).collect();
     let total: f64 = raw.iter().sum();
     Some(raw.into_iter().map(|w| w / total).collect())
-}
-
-/// One member's future as an answer needs it.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Future {
-    /// Its course, past and future.
-    pub course: Course,
-    /// Where it settles, mmHg.
-    pub settled_mmhg: f64,
-    /// Its weight; those of an ensemble sum to 1.
-    pub weight: f64,
-    /// Standard normal for the error of a pH.
-    pub ph_error: f64,
-    /// Standard normal for the error of a PaCO2.
-    pub paco2_error: f64,
-}
-
-impl Ensemble {
-    /// Effective number of members: 1/Σw².
-    #[must_use]
-    pub fn effective(&self) -> f64 {
-        self.effective
-    }
-
-    /// The CO2 curve the members share.
-    #[must_use]
-    pub fn chemistry(&self) -> &Chemistry {
-        &self.chemistry
-    }
-
-    /// Each member from its first step to `to_min`, with `change` made on top where one is given; its
-    /// `jump_sd` says how far R may move with it.
-    #[must_use]
-    pub fn futures(&self, to_min: f64, change: Option<&Step>) -> Vec<Future> {
-        let run = |((member, weight), extra): ((&Member, &f64), &[f64; EXTRA])| {
-            let mut inputs = member.inputs.clone();
-            if let Some(step) = change {
-                inputs.retain(|input| input.at_min < step.at_min || input.at_min <= member.inputs[0].at_min);
-                inputs.push(member.input(step, step.jump_sd * extra[0]));
-            }
-            let from = inputs[0].at_min;
-            let settled_mmhg = inputs[inputs.len() - 1].drive.settled_mmhg();
-            let start = member.start(&self.chemistry);
-            let course = Course::run(&member.body, &self.chemistry, start, (from, to_min), &inputs, 1);
-            Future { course, settled_mmhg, weight: *weight, ph_error: extra[1], paco2_error: extra[2] }
-        };
-        self.members.iter().zip(&self.weights).zip(&self.extra).map(run).collect()
-    }
 }

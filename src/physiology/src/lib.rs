@@ -8,6 +8,7 @@ mod chemistry;
 mod content;
 mod course;
 mod draws;
+mod ensemble;
 mod learn;
 mod linear;
 mod normal;
@@ -21,10 +22,11 @@ mod stepper;
 pub use acid_base::{be_blood, hco3_mmol_l, ph_at, ph_of_blood, standard_base_excess};
 pub use body::{Body, Drive, State};
 pub use chemistry::{Chemistry, ChemistryInput, Unsound};
-pub use content::{ContentEdge, blood_content_ml_l, blood_to_plasma_ratio, plasma_content_ml_dl};
+pub use content::{blood_content_ml_l, blood_to_plasma_ratio, plasma_content_ml_dl};
 pub use course::{Course, Input, minutes_to_share, minutes_to_within};
 pub use draws::standard_normals;
-pub use learn::{Ensemble, Future, Learning, NoMode, Observation};
+pub use ensemble::{Ensemble, Future, Past};
+pub use learn::{Learning, NoMode, Observation};
 pub use normal::{normal_cdf, normal_quantile};
 pub use person::{
     Patient, SedationDepth, Sex, predicted_body_weight_kg, production_factor, resting_production,

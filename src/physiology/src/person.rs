@@ -129,7 +129,7 @@ impl Patient {
             ),
         };
         let (lean_kg, ln_sd) = match (self.height_cm, self.weight_kg) {
-            (Some(height), _) if predicted(height) > LEAST_PREDICTED_KG => {
+            (Some(height), _) if predicted(height) > s::PBW_LEAST.value => {
                 let guessed = if self.height_guessed { s::HEIGHT_GUESSED.spread } else { 0.0 };
                 let sexless = if self.sex.is_none() { s::SEX_UNKNOWN.spread } else { 0.0 };
                 (predicted(height), root_of_squares(&[guessed, sexless]))
@@ -207,9 +207,6 @@ impl Patient {
     }
 }
 
-/// Under this the adult formula has left the range it was made for.
-const LEAST_PREDICTED_KG: f64 = 25.0;
-
 fn between_sexes(female: f64, male: f64) -> f64 {
     female + s::SEX_UNKNOWN.value * (male - female)
 }
@@ -218,16 +215,15 @@ pub(crate) fn root_of_squares(spreads: &[f64]) -> f64 {
     sqrt(spreads.iter().map(|sd| sd * sd).sum())
 }
 
-/// Weight of a child of `height_cm` at a body-mass index of 16 kg/m², the middle of childhood (assumed).
+/// Weight of a child of `height_cm` at the body-mass index of the middle of childhood.
 fn weight_for_height(height_cm: f64) -> f64 {
-    const CHILD_BMI: f64 = 16.0;
     let metres = height_cm / 100.0;
-    CHILD_BMI * metres * metres
+    s::CHILD_BODY_MASS_INDEX.value * metres * metres
 }
 
-/// Weight of a child by age alone: 2·(age + 4), common practice; taken with the spread of an unknown size.
+/// Weight of a child by age alone; taken with the spread of an unknown size.
 fn child_weight(age_years: Option<f64>) -> f64 {
-    2.0 * (age_years.unwrap_or(0.0) + 4.0)
+    s::CHILD_KG_PER_YEAR.value * (age_years.unwrap_or(0.0) + s::CHILD_YEARS_AHEAD.value)
 }
 
 #[cfg(test)]

@@ -26,10 +26,6 @@ const OFFSET: usize = 11;
 /// First of the coordinates that are jumps of ln R, one a real change of settings.
 pub const JUMP_FIRST: usize = 12;
 
-/// Least share of a breath that is taken to reach the alveoli: a breath no larger than the dead space still
-/// moves a little gas (streaming, diffusion). Assumed; answers that rest on it are withheld by `bedside`.
-const LEAST_ALVEOLAR_SHARE: f64 = 0.02;
-
 /// Nobody is taken to start settled above this, mmHg: a member that would has no weight after its gas.
 const HIGHEST_START_MMHG: f64 = 250.0;
 
@@ -373,8 +369,11 @@ const NO_STEP: Step = Step {
     jump_sd: 0.0,
 };
 
+/// A breath no larger than the dead space still moves a little gas; answers that rest on it are withheld by
+/// whoever asks.
 fn above_least(share: f64) -> f64 {
-    if share > LEAST_ALVEOLAR_SHARE { share } else { LEAST_ALVEOLAR_SHARE }
+    let least = s::LEAST_ALVEOLAR_SHARE.value;
+    if share > least { share } else { least }
 }
 
 fn alveolar_prior(lung_injury: bool, first: &Step, series_ml: f64, shape_sd: f64) -> Prior {

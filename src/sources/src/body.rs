@@ -18,6 +18,7 @@ figures! { BODY;
     PBW_FEMALE = 45.5, 0.0, "kg", "Predicted body weight of a woman at the reference height", "ARDS Network. N Engl J Med 2000;342:1301", Opened;
     PBW_PER_CM = 0.91, 0.0, "kg/cm", "Predicted body weight per cm of height", "ARDS Network. N Engl J Med 2000;342:1301", Opened;
     PBW_REFERENCE_CM = 152.4, 0.0, "cm", "Reference height of the predicted body weight", "ARDS Network. N Engl J Med 2000;342:1301", Opened;
+    PBW_LEAST = 25.0, 0.0, "kg", "Predicted body weight under which the adult formula has left its range", "Assumed", Assumed;
     SERIES_CHILD = 3.28, 0.0, "mL/kg", "Anatomical dead space of a child, at birth", "Numa, Newth. J Appl Physiol 1996;80:1485", Opened;
     SERIES_CHILD_AGE = 0.56, 0.0, "mL/kg", "Its fall with ln(1 + age)", "Numa, Newth. J Appl Physiol 1996;80:1485", Opened;
     ADULT_FROM = 18.0, 0.0, "years", "Age from which the adult formulas are used", "Assumed", Assumed;

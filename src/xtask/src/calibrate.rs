@@ -7,8 +7,8 @@ use std::sync::atomic::{AtomicUsize, Ordering};
 use anyhow::{Result, bail, ensure};
 use bedside::{Anchor, Members, members_at, reading_95, summarise};
 use physiology::{
-    Chemistry, ChemistryInput, Exact, Future, Learning, Member, Observation, Patient, Priors, Sex, Step,
-    normal_quantile, ph_at, predicted_body_weight_kg, standard_base_excess, weighted_quantiles,
+    Chemistry, ChemistryInput, Ensemble, Exact, Future, Learning, Member, Observation, Patient, Priors, Sex,
+    Step, normal_quantile, ph_at, predicted_body_weight_kg, standard_base_excess, weighted_quantiles,
 };
 use pico_args::Arguments;
 use sources as s;
@@ -128,17 +128,19 @@ fn simulate(number: u64) -> Patientwise {
     for count in 1..=truth.gases.len() {
         // The change after this gas is already in the steps: its jump is a coordinate like the others.
         let change_at = truth.gases[count - 1].at_min + GAS_TO_CHANGE;
-        let Some((futures, effective)) = truth.learn(count, change_at) else {
+        let Some(ensemble) = truth.learn(count, change_at) else {
             result.withheld += usize::from(AFTER_GASES.contains(&count));
             continue;
         };
+        let past = ensemble.past(change_at);
+        let futures = ensemble.futures(&past, change_at + CHANGE_TO_GAS + GAS_TO_CHANGE, None);
         if let Some(gas) = truth.gases.get(count) {
             let (low, high) = reading_95(&futures, gas.at_min);
             result.tested += 1;
             result.flagged += usize::from(gas.paco2_mmhg < low || gas.paco2_mmhg > high);
         }
         if AFTER_GASES.contains(&count) {
-            result.cells.extend(truth.judge(count, change_at, &futures, effective));
+            result.cells.extend(truth.judge(count, change_at, &futures, ensemble.effective()));
         }
     }
     result
@@ -181,7 +183,7 @@ impl Truth {
     }
 
     /// Learns from the first `count` gases, with every step up to `change_at` known.
-    fn learn(&self, count: usize, change_at: f64) -> Option<(Vec<Future>, f64)> {
+    fn learn(&self, count: usize, change_at: f64) -> Option<Ensemble> {
         let known: Vec<Step> = self.steps.iter().copied().filter(|step| step.at_min <= change_at).collect();
         let priors = with_jumps(&self.patient, known);
         let last = self.gases[count - 1];
@@ -196,12 +198,10 @@ impl Truth {
             })
             .collect();
         let learning = Learning { priors: &priors, chemistry: &chemistry, observations: &observations };
-        let ensemble = learning.ensemble(MEMBERS, SEED).ok()?;
-        let horizon = change_at + CHANGE_TO_GAS + AT_MINUTES[AT_MINUTES.len() - 1];
-        Some((ensemble.futures(horizon, None), ensemble.effective()))
+        learning.ensemble(MEMBERS, SEED).ok()
     }
 
-    fn judge(&self, gases: usize, change_at: f64, futures: &[Future], effective: f64) -> Vec<Cell> {
+    fn judge(&self, gases: usize, change_at: f64, futures: &[Future<'_>], effective: f64) -> Vec<Cell> {
         let last = self.gases[gases - 1];
         let anchor = Anchor { at_min: last.at_min, ph: last.ph };
         let chemistry = curve(self.standard_be, self.hb);
