@@ -4,7 +4,7 @@ mod phone;
 mod server;
 mod site;
 
-pub use phone::Phone;
+pub use phone::{Effort, Phone};
 pub use server::Server;
 pub use site::SiteCopy;
 

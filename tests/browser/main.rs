@@ -7,6 +7,7 @@ mod harness;
 
 mod blocked;
 mod first_visit;
+mod journey;
 mod narrow;
 mod no_signal;
 mod served;

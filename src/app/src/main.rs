@@ -9,5 +9,5 @@ mod state;
 mod words;
 
 fn main() {
-    leptos::mount::mount_to_body(root::Root);
+    leptos::mount::mount_to_body(root::root);
 }

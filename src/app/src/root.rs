@@ -3,44 +3,46 @@
 use leptos::prelude::*;
 
 use crate::device::page;
-use crate::parts::bar::Bar;
-use crate::parts::header::{Header, title};
-use crate::parts::notices::Notices;
+use crate::parts::bar::bar;
+use crate::parts::header::{header, title};
+use crate::parts::notices::notices;
 use crate::rooms::{change, gas, now, person, record, settings, start};
 use crate::state::app::App;
 use crate::state::room::Room;
 use crate::words::start::NAME;
 
 /// The whole page.
-#[component]
-pub fn Root() -> impl IntoView {
+pub fn root() -> AnyView {
     let app = App::new();
-    provide_context(app);
     app.follow();
     Effect::new(move |before: Option<Room>| {
         let room = app.room.get();
         page::title(&format!("{}: {NAME}", title(room)));
         if before.is_some() {
-            page::focus("room-title");
+            page::enter_room("room-title");
         }
         room
     });
-    let room = move || match app.room.get() {
-        Room::Start => view! { <start::Start /> }.into_any(),
-        Room::Gas => view! { <gas::Gas /> }.into_any(),
-        Room::Settings => view! { <settings::Settings /> }.into_any(),
-        Room::Now => view! { <now::Now /> }.into_any(),
-        Room::Change => view! { <change::Change /> }.into_any(),
-        Room::Record => view! { <record::Record /> }.into_any(),
-        Room::Person => view! { <person::Person /> }.into_any(),
+    // The case is part of the key: another case's room is drawn anew.
+    let place = Memo::new(move |_| (app.room.get(), app.open.with(|open| open.as_ref().map(|o| o.id.clone()))));
+    let room = move || match place.get().0 {
+        Room::Start => start::start(app),
+        Room::Gas => gas::gas(app),
+        Room::Settings => settings::settings(app),
+        Room::Now => now::now(app),
+        Room::Change => change::change(app),
+        Room::Record => record::record(app),
+        Room::Person => person::person(app),
     };
+    let class = move || if app.active.get().is_some() { "page keys-open" } else { "page" };
     view! {
-        <div class="page" class:keys-open=move || app.active.get().is_some()>
-            <Header />
-            <Notices />
-            <main class="room">{room}</main>
-            <Bar />
+        <div class=move || class()>
+            {header(app)}
+            {notices(app)}
+            <main class="room">{move || room()}</main>
+            {bar(app)}
         </div>
-        <p class="unseen" role="status" aria-live="polite">{app.told}</p>
+        <p class="unseen" role="status" aria-live="polite">{move || app.told.get()}</p>
     }
+    .into_any()
 }

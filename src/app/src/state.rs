@@ -6,6 +6,7 @@ pub mod demo;
 pub mod draft;
 pub mod field;
 pub mod outlook;
+pub mod present;
 pub mod room;
 pub mod rows;
 pub mod sheet;

@@ -4,7 +4,7 @@ use case::{Condition, Control, EntryKind, Now, Settings};
 use sources as s;
 
 use crate::Caution;
-use crate::offer::price;
+use crate::offer::{Price, price};
 use crate::study::{Learnt, Study};
 
 fn caution(id: &'static str, words: impl Into<String>, source: Option<&s::Figure>) -> Caution {
@@ -116,22 +116,42 @@ fn record_cautions(study: &Study, all: &mut Vec<Caution>) {
     }
 }
 
-/// Cautions that a change brings, a broken limit first.
+/// Cautions that a change brings: what can kill, then broken limits, then what to look at.
 pub(crate) fn of_change(study: &Study, current: &Settings, change: &Settings) -> Vec<Caution> {
+    let Some(price) = price(&study.history.patient, current, change) else { return vec![] };
+    let mut all = dangers(study, current, &price);
+    all.extend(broken_limits(&price));
+    let faster = current.rate_per_min.is_some_and(|rate| price.rate_per_min > rate);
+    if current.control == Some(Control::Volume) && faster {
+        all.push(caution("check_trapping", "After a faster rate look: does flow come back to zero?", None));
+    }
+    all
+}
+
+/// What this change could do to this patient.
+pub(crate) fn dangers(study: &Study, current: &Settings, price: &Price) -> Vec<Caution> {
     let mut all = Vec::new();
-    let Some(price) = price(&study.history.patient, current, change) else { return all };
+    let faster = current.rate_per_min.is_none_or(|rate| price.rate_per_min > rate);
+    if faster && study.history.has(|c| *c == Condition::AirflowObstruction) == Some(true) {
+        let words = "Airflow obstruction: more rate can raise PaCO₂ and stop the heart.";
+        all.push(caution("obstruction_rate", words, None));
+    }
+    let less = current
+        .breath()
+        .is_some_and(|now| price.minute_volume_l_min < now.rate_per_min * now.tidal_volume_ml / 1000.0);
+    if less && study.learnt().is_some_and(|learnt| learnt.standard_be <= s::METABOLIC_SBE.value) {
+        let words = "Metabolic acidosis: less ventilation drops pH at once.";
+        all.push(caution("metabolic_less", words, Some(&s::METABOLIC_SBE)));
+    }
+    all
+}
+
+/// Limits that settings would break.
+pub(crate) fn broken_limits(price: &Price) -> Vec<Caution> {
+    let mut all = Vec::new();
     if let Some(plateau) = price.plateau_cmh2o.filter(|p| *p > s::PLATEAU_MOST.value) {
         let words = format!("Plateau about {plateau:.0} cmH₂O, over {:.0}.", s::PLATEAU_MOST.value);
         all.push(caution("plateau", words, Some(&s::PLATEAU_MOST)));
-    }
-    let faster = |old: Option<f64>| old.is_none_or(|old| price.rate_per_min > old);
-    let obstructed = study.history.has(|c| *c == Condition::AirflowObstruction) == Some(true);
-    if obstructed && faster(current.rate_per_min) {
-        all.push(caution(
-            "obstruction_rate",
-            "Airflow obstruction: more rate can raise PaCO₂ and stop the heart.",
-            None,
-        ));
     }
     if price.rate_per_min > s::RATE_MOST.value {
         let words = format!("Rate {:.0}, over {:.0} a minute.", price.rate_per_min, s::RATE_MOST.value);
@@ -140,11 +160,6 @@ pub(crate) fn of_change(study: &Study, current: &Settings, change: &Settings) ->
     if let Some(ml_kg) = price.ml_per_kg.filter(|v| *v > s::VT_LUNG_MOST.value) {
         let words = format!("{ml_kg:.1} mL/kg, over {:.0}.", s::VT_LUNG_MOST.value);
         all.push(caution("ml_per_kg", words, Some(&s::VT_LUNG_MOST)));
-    }
-    if current.control == Some(Control::Volume)
-        && price.rate_per_min > current.rate_per_min.unwrap_or(f64::MAX)
-    {
-        all.push(caution("check_trapping", "After a faster rate look: does flow come back to zero?", None));
     }
     all
 }

@@ -4,7 +4,7 @@ use case::{Condition, Now, Settings};
 use physiology::Patient;
 use sources as s;
 
-use crate::cautions::{is_retainer, retainer_unanswered};
+use crate::cautions::{broken_limits, is_retainer, retainer_unanswered};
 use crate::standing::breath;
 use crate::study::{Learnt, Study};
 use crate::{Answer, Caution, Forecast, Status};
@@ -109,8 +109,7 @@ impl Study {
                 dropped = true;
                 continue;
             }
-            let current = self.history.settings_at(now.wall);
-            let cautions = crate::cautions::of_change(self, &current, &change);
+            let cautions = broken_limits(&price);
             offers.offers.push(Offer { change, forecast, price, cautions });
         }
         if dropped {

@@ -28,6 +28,9 @@ const helpers = {
     const all = controls().filter((control) => !control.disabled);
     return all.find((control) => nameOf(control) === label) ?? all.find((control) => firstLine(control) === label) ?? null;
   },
+  // The first control whose name begins so.
+  beginning: (label) =>
+    controls().find((control) => !control.disabled && (nameOf(control).startsWith(label) || control.innerText.startsWith(label))) ?? null,
   controls: () => controls().map((control) => nameOf(control) + (control.disabled ? " (disabled)" : "")),
   // Whatever reaches beyond the right edge and isn't inside something that scrolls by itself.
   overflow: () => {

@@ -1,7 +1,7 @@
 //! The browser: Chromium with the screen and the touch of a phone, and a fresh profile.
 
 use super::{Setup, root};
-use anyhow::{Context, Result, bail};
+use anyhow::{Context, Result, bail, ensure};
 use serde_json::{Value, json};
 use std::env;
 use std::fs;
@@ -73,6 +73,23 @@ impl Phone {
             old.end().await;
         }
         // A profile that an ended browser had no time to unlock would be refused.
+        let _ = fs::remove_file(self.profile.path().join("SingletonLock"));
+        *session = Some(Session::start(self.capabilities.clone()).await?);
+        Ok(())
+    }
+
+    /// Ends the browser as a flat battery would, in the middle of a word, and starts it again with the same profile.
+    pub async fn crash(&self) -> Result<()> {
+        let mut session = self.session.lock().await;
+        if let Some(mut old) = session.take() {
+            let driver = old.process.id().context("the driver has ended")?;
+            let browser = descendants(driver)?;
+            ensure!(!browser.is_empty(), "there is no browser to crash");
+            Command::new("kill").arg("-9").args(browser.iter().map(u32::to_string)).status().await?;
+            old.process.kill().await?;
+            // Its session is gone with it; saying goodbye to the driver would only wait for an answer.
+            std::mem::forget(old.driver);
+        }
         let _ = fs::remove_file(self.profile.path().join("SingletonLock"));
         *session = Some(Session::start(self.capabilities.clone()).await?);
         Ok(())
@@ -176,15 +193,28 @@ impl Phone {
 
     /// Touches the control of this name, which must be there (at once or soon), enabled and under nothing else.
     pub async fn tap(&self, label: &str) -> Result<()> {
-        self.touch(label).await?;
+        self.touch("control", label).await?;
+        self.taps.fetch_add(1, Ordering::Relaxed);
+        Ok(())
+    }
+
+    /// As `tap`, for a control whose name goes on with what isn't known beforehand: a time, a figure.
+    pub async fn tap_beginning(&self, label: &str) -> Result<()> {
+        self.touch("beginning", label).await?;
         self.taps.fetch_add(1, Ordering::Relaxed);
         Ok(())
     }
 
     /// Types digits on the page's own keypad, key by key.
     pub async fn type_digits(&self, digits: &str) -> Result<()> {
+        let mut before = None;
         for digit in digits.chars() {
-            self.touch(&digit.to_string()).await?;
+            // A hand needs longer for the same key twice; the keypad takes a faster second touch for a bounce.
+            if before == Some(digit) {
+                sleep(Duration::from_millis(150)).await;
+            }
+            before = Some(digit);
+            self.touch("control", &digit.to_string()).await?;
             self.digits.fetch_add(1, Ordering::Relaxed);
         }
         Ok(())
@@ -195,10 +225,10 @@ impl Phone {
         Effort { taps: self.taps.swap(0, Ordering::Relaxed), digits: self.digits.swap(0, Ordering::Relaxed) }
     }
 
-    async fn touch(&self, label: &str) -> Result<()> {
+    async fn touch(&self, how: &str, label: &str) -> Result<()> {
         let began = Instant::now();
         loop {
-            let found = self.driver().await?.execute(PAGE, vec![json!("control"), json!(label)]).await?;
+            let found = self.driver().await?.execute(PAGE, vec![json!(how), json!(label)]).await?;
             if let Ok(control) = found.element() {
                 self.driver()
                     .await?
@@ -291,6 +321,27 @@ fn capabilities(setup: &Setup, profile: &TempDir) -> Result<Capabilities> {
     capabilities.add_experimental_option("prefs", &setup.preferences)?;
     capabilities.set_browser_log_level(LoggingPrefsLogLevel::All)?;
     Ok(capabilities.into())
+}
+
+/// The processes below a process, as the system lists them.
+fn descendants(ancestor: u32) -> Result<Vec<u32>> {
+    let mut parents = Vec::new();
+    for entry in fs::read_dir("/proc")? {
+        let path = entry?.path();
+        // "pid (name) state parent …", where the name may hold anything but ends with the last bracket.
+        let Ok(stat) = fs::read_to_string(path.join("stat")) else { continue };
+        let process = stat.split(' ').next().and_then(|pid| pid.parse::<u32>().ok());
+        let parent = stat.rsplit_once(") ").and_then(|(_, rest)| rest.split(' ').nth(1)?.parse::<u32>().ok());
+        parents.extend(process.zip(parent));
+    }
+    let mut family = vec![ancestor];
+    let mut at = 0;
+    while at < family.len() {
+        let parent = family[at];
+        family.extend(parents.iter().filter(|(_, its)| *its == parent).map(|(process, _)| process));
+        at += 1;
+    }
+    Ok(family.split_off(1))
 }
 
 fn browser() -> Result<String> {

@@ -46,6 +46,18 @@ pub fn focus(id: &'static str) {
     });
 }
 
+/// A room that was entered is read from its title and seen from its top.
+pub fn enter_room(title_id: &'static str) {
+    request_animation_frame(move || {
+        if let Ok(Some(scroll)) = document().query_selector(".scroll") {
+            scroll.set_scroll_top(0);
+        }
+        if let Some(title) = element(title_id) {
+            let _ = title.focus();
+        }
+    });
+}
+
 /// Brings the place with this id into sight once what was just changed is drawn.
 pub fn into_sight(id: &'static str) {
     request_animation_frame(move || {

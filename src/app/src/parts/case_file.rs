@@ -4,14 +4,12 @@ use leptos::prelude::*;
 use logbook::FileError;
 
 use crate::device::{clock, files, page};
-use crate::state::app::app;
+use crate::state::app::App;
 use crate::state::room::Room;
 use crate::words::record as words;
 
 /// Chooses a case file and opens it as a new case.
-#[component]
-pub fn Import() -> impl IntoView {
-    let app = app();
+pub fn import(app: App) -> AnyView {
     let chosen = move |event: web_sys::Event| {
         let Some(input) = page::input(&event) else { return };
         files::chosen(&input, logbook::LARGEST_FILE_BYTES, move |read| match read {
@@ -31,18 +29,14 @@ pub fn Import() -> impl IntoView {
             <input type="file" class="file-input" accept=".json,application/json" on:change=chosen />
         </label>
     }
+    .into_any()
 }
 
 /// Downloads the open case.
-#[component]
-pub fn Export() -> impl IntoView {
-    let app = app();
-    let export = move |_| {
-        let Some(text) = app.export() else { return };
-        let name = words::file_name(&app.label().unwrap_or_default(), &clock::now());
-        if files::download(&name, &text).is_err() {
-            app.trouble.set(Some(words::NO_EXPORT.to_owned()));
-        }
-    };
-    view! { <button type="button" class="main-button" on:click=export>{words::EXPORT}</button> }
+pub fn export(app: App) {
+    let Some(text) = app.export() else { return };
+    let name = words::file_name(&untrack(|| app.label()).unwrap_or_default(), &clock::now());
+    if files::download(&name, &text).is_err() {
+        app.trouble.set(Some(words::NO_EXPORT.to_owned()));
+    }
 }

@@ -1,52 +1,32 @@
 //! Sentences to heed: what an answer depends on, why there is none, and cautions.
 
 use bedside::{Caution, Standing};
-use leptos::prelude::*;
 
+use super::html::{element, said, text};
 use crate::words::now as words;
 
-/// What must stay so, and why there is no answer.
-#[component]
-pub fn Conditions(
-    /// The decision.
-    #[prop(into)]
-    standing: Signal<Option<Standing>>,
-) -> impl IntoView {
-    let conditions = move || {
-        standing.with(|standing| {
-            let standing = standing.as_ref()?;
-            let all = standing.conditions.iter().map(|c| view! { <p class="condition">{c.words.clone()}</p> });
-            Some(all.collect_view())
-        })
-    };
-    let withheld = move || {
-        standing.with(|standing| {
-            let standing = standing.as_ref()?;
-            let all = standing.withheld.iter().map(|why| {
-                let help = (!why.would_help.is_empty()).then(|| {
-                    view! { <span class="help">{words::WOULD_HELP} " " {why.would_help.clone()}</span> }
-                });
-                view! { <p class="withheld">{why.words.clone()} " " {help}</p> }
-            });
-            Some(all.collect_view())
-        })
-    };
-    view! { {withheld} {conditions} }
+/// Why there is no answer, and what must stay so.
+pub fn standing(standing: &Standing) -> String {
+    let mut html = String::new();
+    for why in &standing.withheld {
+        let mut inner = text(&why.words);
+        if !why.would_help.is_empty() {
+            let help = format!("{} {}", words::WOULD_HELP, why.would_help);
+            inner = inner + " " + &said("span", "help", &help);
+        }
+        html += &element("p", "withheld", &inner);
+    }
+    for condition in &standing.conditions {
+        html += &said("p", "condition", &condition.words);
+    }
+    html
 }
 
-/// Cautions, the most dangerous first and marked.
-#[component]
-pub fn Sentences(
-    /// The cautions.
-    #[prop(into)]
-    cautions: Signal<Vec<Caution>>,
-) -> impl IntoView {
-    view! {
-        <ul class="cautions-list" hidden=move || cautions.with(Vec::is_empty)>
-            {move || {
-                let all = cautions.get().into_iter();
-                all.map(|caution| view! { <li class="caution">{caution.words}</li> }).collect_view()
-            }}
-        </ul>
+/// Cautions, the most dangerous first, each marked.
+pub fn cautions(cautions: &[Caution]) -> String {
+    if cautions.is_empty() {
+        return String::new();
     }
+    let all: String = cautions.iter().map(|caution| said("li", "caution", &caution.words)).collect();
+    element("ul", "cautions-list", &all)
 }

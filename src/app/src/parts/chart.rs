@@ -4,12 +4,13 @@ mod picture;
 mod reading;
 
 use bedside::{Forecast, Quantiles};
-use case::{Case, Gas, Moment, Now};
+use case::{Case, Now};
 use leptos::prelude::*;
 
 use super::scale::Scale;
 use crate::state::outlook;
 use crate::words::now as words;
+use crate::words::values;
 
 /// What a chart shows.
 #[derive(Debug, Clone, PartialEq)]
@@ -17,50 +18,64 @@ pub struct Picture {
     scale: Scale,
     now: Now,
     forecast: Forecast,
-    /// Another course to compare with, and its name on the chart.
-    compared: Option<(Forecast, String)>,
-    /// Gases: minute, PaCO2, and its error, mmHg.
-    gases: Vec<(f64, f64, f64)>,
-    /// Drawn dashed: nobody has confirmed it for half an hour.
+    compared: Option<Compared>,
+    gases: Vec<Mark>,
     stale: bool,
     said: String,
+}
+
+/// Another course to compare with.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Compared {
+    /// The other course.
+    pub forecast: Forecast,
+    /// Its name on the chart.
+    pub name: String,
+}
+
+/// A gas on the chart.
+#[derive(Debug, Clone, Copy, PartialEq)]
+struct Mark {
+    minute: f64,
+    mmhg: f64,
+    error_mmhg: f64,
 }
 
 /// Eight times in ten an analyser reads PaCO2 within this share of the truth: 1.28 standard deviations of
 /// 3 %, assumed as long as the analyser's own is not known.
 const GAS_ERROR: f64 = 1.28 * 0.03;
+/// The chart begins at least so many minutes before now.
+const LEAST_BACK_MIN: f64 = 10.0;
 
 impl Picture {
-    /// The picture of a forecast, with the case's gases.
+    /// The picture of a forecast, with the case's gases. `stale` draws it dashed: nobody has confirmed it.
     pub fn new(
         forecast: &Forecast,
-        compared: Option<(Forecast, String)>,
+        compared: Option<Compared>,
         case: &Case,
         now: &Now,
         height: f64,
         stale: bool,
     ) -> Option<Self> {
         let (paco2, _) = outlook::at(forecast, 0.0)?;
-        let from = forecast.minutes.first().copied()?.min(-10.0);
+        let from = forecast.minutes.first().copied()?.min(-LEAST_BACK_MIN);
         let to = outlook::horizon(forecast);
-        let gases: Vec<(f64, f64, f64)> = case
-            .gases()
-            .iter()
-            .map(|(_, at, gas)| (at.minutes_since(now.wall), gas.pco2_mmhg, gas.pco2_mmhg * GAS_ERROR))
-            .filter(|(minute, ..)| (from..=to).contains(minute))
-            .collect();
-        let shown = |forecast: &Forecast| -> Vec<f64> {
-            let band = &forecast.paco2_mmhg;
-            let all = forecast.minutes.iter().zip(band.p10.iter().zip(&band.p90));
-            all.filter(|(minute, _)| **minute <= to).flat_map(|(_, (low, high))| [*low, *high]).collect()
-        };
-        let mut values = shown(forecast);
-        if let Some((other, _)) = &compared {
-            values.extend(shown(other));
+        let mut values = vec![];
+        shown(forecast, to, &mut values);
+        if let Some(compared) = &compared {
+            shown(&compared.forecast, to, &mut values);
         }
-        values.extend(gases.iter().flat_map(|(_, mmhg, error)| [mmhg - error, mmhg + error]));
+        let mut gases = vec![];
+        for (_, at, gas) in case.gases() {
+            let minute = at.minutes_since(now.wall);
+            if minute >= from && minute <= to {
+                let error_mmhg = gas.pco2_mmhg * GAS_ERROR;
+                values.extend([gas.pco2_mmhg - error_mmhg, gas.pco2_mmhg + error_mmhg]);
+                gases.push(Mark { minute, mmhg: gas.pco2_mmhg, error_mmhg });
+            }
+        }
         Some(Self {
-            scale: Scale::around(from, to, height, values.into_iter()),
+            scale: Scale::around(from, to, height, &values),
             now: *now,
             said: words::picture(&paco2, forecast, now),
             forecast: forecast.clone(),
@@ -75,7 +90,7 @@ impl Picture {
     }
 
     fn clock(&self, minute: f64) -> String {
-        crate::words::values::clock(self.now.wall.plus_minutes(minute), &self.now)
+        values::clock(self.now.wall.plus_minutes(minute), &self.now)
     }
 
     /// The minutes that the table lists and the slider stops at.
@@ -84,24 +99,31 @@ impl Picture {
     }
 }
 
-/// The chart with its slider and its table.
-#[component]
-pub fn Chart(
-    /// What it shows; nothing where there is no forecast.
-    #[prop(into)]
-    picture: Signal<Option<Picture>>,
-) -> impl IntoView {
-    let at = RwSignal::new(0_usize);
-    view! {
-        <div class="chart" hidden=move || picture.with(Option::is_none)>
-            {move || picture.get().map(|picture| picture::draw(&picture, at))}
-            <reading::Slider picture at />
-            <reading::Table picture />
-        </div>
+/// The edges of a band up to the horizon.
+fn shown(forecast: &Forecast, to: f64, values: &mut Vec<f64>) {
+    let band = &forecast.paco2_mmhg;
+    for (index, minute) in forecast.minutes.iter().enumerate() {
+        if *minute <= to
+            && let Some(at) = band.at(index)
+        {
+            values.extend([at.p10, at.p90]);
+        }
     }
 }
 
-/// The last gas of a case.
-pub fn last_gas(case: &Case) -> Option<(Gas, Moment)> {
-    case.gases().last().map(|(_, at, gas)| (*gas, *at))
+/// The drawing; nothing where there is no picture. `at` is where the slider stands.
+pub fn drawing(picture: Memo<Option<Picture>>, at: RwSignal<usize>) -> AnyView {
+    let drawn = move || picture.with(|p| p.as_ref().map(|p| picture::svg(p, at.get())).unwrap_or_default());
+    view! { <div class="chart" inner_html=move || drawn()></div> }.into_any()
+}
+
+/// Its slider and its table.
+pub fn reading(picture: Memo<Option<Picture>>, at: RwSignal<usize>) -> AnyView {
+    view! {
+        <div class="chart-reading" hidden=move || picture.with(Option::is_none)>
+            {reading::slider(picture, at)}
+            {reading::table(picture)}
+        </div>
+    }
+    .into_any()
 }

@@ -2,69 +2,81 @@
 
 use leptos::prelude::*;
 
+use super::buttons::press;
 use crate::device::clock;
-use crate::state::app::app;
+use crate::state::app::App;
 use crate::state::choice::Choice;
 
-/// The chips of `choice`; `then` runs after one was chosen.
-#[component]
-pub fn Chips(
-    /// What is chosen.
+/// The chips of `choice`; `then` runs after one was chosen, `fault` says what is wrong.
+pub fn chips(
+    app: App,
     choice: Choice,
-    /// What is wrong, as a sentence.
-    #[prop(into)]
-    fault: Signal<Option<String>>,
-    /// Runs after a choice.
-    then: Callback<()>,
-) -> impl IntoView {
-    let app = app();
+    fault: impl Fn() -> Option<String> + Copy + Send + Sync + 'static,
+    then: impl Fn() + Copy + 'static,
+) -> AnyView {
     let spec = choice.spec();
-    let label_id = format!("{}-label", spec.id);
-    let fault_id = format!("{}-fault", spec.id);
-    let (labelled, described) = (label_id.clone(), fault_id.clone());
-    let pick = Memo::new(move |_| app.sheet.with(|sheet| sheet.pick(choice)));
-    let chips = (0..).zip(spec.options).map(move |(place, words): (u8, &&str)| {
-        let chosen = move || pick.get() == Some(place);
-        let press = move |_| {
+    let pick = move || app.sheet.with(|sheet| sheet.pick(choice));
+    let mut all = vec![];
+    for (place, words) in (0_u8..).zip(spec.options) {
+        let choose = move || {
             app.sheet.update(|sheet| sheet.choose(choice, Some(place), &clock::now()));
-            then.run(());
+            then();
         };
+        let pressed = move || pick() == Some(place);
         // The first chip carries the group's id, so that focus can be led to the group.
-        view! {
-            <button
-                type="button"
-                class="chip"
-                id=(place == 0).then_some(spec.id)
-                aria-pressed=move || if chosen() { "true" } else { "false" }
-                on:click=press
-            >
-                {*words}
-            </button>
-        }
-    });
-    let columns = format!("chips-row chips-{}", spec.columns);
+        all.push(chip(words, if place == 0 { spec.id } else { "" }, pressed, choose));
+    }
+    group(spec.label, spec.columns, all, fault)
+}
+
+/// One chip.
+pub fn chip(
+    words: &'static str,
+    id: &'static str,
+    pressed: impl Fn() -> bool + Send + 'static,
+    choose: impl FnMut() + 'static,
+) -> AnyView {
     view! {
-        <div
-            class="field chips"
-            role="group"
-            aria-labelledby=labelled
-            aria-describedby=described
+        <button
+            type="button"
+            class="chip"
+            id=id
+            aria-pressed=move || if pressed() { "true" } else { "false" }
+            on:click=press(choose)
         >
-            <span class="field-label" id=label_id>{spec.label}</span>
-            <div class=columns>{chips.collect_view()}</div>
-            <Fault id=fault_id words=fault />
+            {words}
+        </button>
+    }
+    .into_any()
+}
+
+/// A named group of chips with its error.
+pub fn group(
+    label: &'static str,
+    columns: u8,
+    chips: Vec<AnyView>,
+    fault: impl Fn() -> Option<String> + Copy + Send + Sync + 'static,
+) -> AnyView {
+    let columns = if columns == 2 { "chips-row chips-2" } else { "chips-row chips-3" };
+    view! {
+        <div class="field chips" role="group" aria-label=crate::words::spoken::spoken(label)>
+            <span class="field-label" aria-hidden="true">{label}</span>
+            <div class=columns>{chips}</div>
+            {error("", fault)}
         </div>
     }
+    .into_any()
 }
 
 /// What is wrong, beside its control.
-#[component]
-pub fn Fault(
-    /// Its id, for the control it describes.
-    id: String,
-    /// The sentence; nothing when all is well.
-    #[prop(into)]
-    words: Signal<Option<String>>,
-) -> impl IntoView {
-    view! { <p class="fault" id=id hidden=move || words.get().is_none()>{move || words.get()}</p> }
+pub fn error(
+    id: &'static str,
+    words: impl Fn() -> Option<String> + Copy + Send + Sync + 'static,
+) -> AnyView {
+    view! {
+        <p class="fault" id=id hidden=move || words().is_none()>
+            {move || words().unwrap_or_default()}
+        </p>
+    }
+    .into_any()
 }

@@ -1,46 +1,59 @@
-//! A form drawn from its rows, and the leading on from row to row.
+//! A form drawn from its rows, the leading on from row to row, and what must be right before it is written.
 
+use bedside::Question;
 use leptos::prelude::*;
 
-use super::chips::Chips;
-use super::number::NumberField;
+use super::chips::chips;
+use super::number::number_field;
+use super::questions::questions;
 use crate::device::page;
-use crate::state::app::{App, app};
+use crate::state::app::App;
 use crate::state::field::Field;
 use crate::state::rows::{self, Place, Row};
 use crate::state::sheet::Reading;
 
-/// The rows of a form; `rows` may change with what is chosen.
-#[component]
-pub fn Form(
-    /// The rows.
-    rows: Memo<Vec<Row>>,
+/// A form as data.
+#[derive(Clone, Copy)]
+pub struct Form {
+    /// Its rows, which may change with what is chosen.
+    pub rows: fn(App) -> Vec<Row>,
     /// The old value of a field, as a hint.
-    hint: Callback<Field, Option<String>>,
-) -> impl IntoView {
-    view! {
-        <For each=move || rows.get() key=|row| *row let(row)>
-            <OneRow row rows hint />
-        </For>
-    }
+    pub hint: fn(App, Field) -> Option<String>,
+    /// What is asked before it is written.
+    pub ask: fn(App) -> Vec<Question>,
+    /// The field that Mend it leads to.
+    pub mend: Field,
+    /// Writes it, or goes on.
+    pub press: fn(App),
 }
 
-#[component]
-fn OneRow(row: Row, rows: Memo<Vec<Row>>, hint: Callback<Field, Option<String>>) -> impl IntoView {
-    let app = app();
-    let fault = Signal::derive(move || said_fault(app, row));
+/// The rows and the open questions.
+pub fn form(app: App, form: Form) -> AnyView {
+    let rows = Memo::new(move |_| (form.rows)(app));
+    let open = Memo::new(move |_| if app.asked.get() { (form.ask)(app) } else { vec![] });
+    let all = move || {
+        let mut all = vec![];
+        for row in rows.get() {
+            all.push(one_row(app, row, form));
+        }
+        all.into_any()
+    };
+    view! {
+        {move || all()}
+        {questions(app, open, form.mend, move || (form.press)(app))}
+    }
+    .into_any()
+}
+
+fn one_row(app: App, row: Row, form: Form) -> AnyView {
+    let fault = move || said_fault(app, row);
     match row {
         Row::Heading(words) => view! { <h2 class="form-heading">{words}</h2> }.into_any(),
         Row::Note(words) => view! { <p class="note">{words}</p> }.into_any(),
         Row::Chips(choice, _) => {
-            let then = Callback::new(move |()| lead_on(app, rows, Place::Chips(choice)));
-            view! { <Chips choice fault then /> }.into_any()
+            chips(app, choice, fault, move || lead_on(app, form, Place::Chips(choice)))
         }
-        Row::Number(field, _) => {
-            let hint = Signal::derive(move || hint.run(field));
-            let next = Callback::new(move |()| next(app, rows));
-            view! { <NumberField field fault hint next /> }.into_any()
-        }
+        Row::Number(field, _) => number_field(app, field, fault, form.hint, move || next(app, form)),
     }
 }
 
@@ -51,47 +64,55 @@ fn said_fault(app: App, row: Row) -> Option<String> {
         Row::Number(field, _) => app.left.with(|left| left.contains(&field)),
         _ => false,
     };
-    let words = app.sheet.with(|sheet| match row {
+    if !asked && !left {
+        return None;
+    }
+    app.sheet.with(|sheet| match row {
         // What is missing is said only when the form was to be written.
         Row::Number(field, _) if !asked && sheet.read(field, app.group()) == Reading::Empty => None,
         _ => rows::fault(sheet, row, app.group()),
-    })?;
-    (asked || left).then_some(words)
+    })
 }
 
 /// Goes to the row after `place` once the rows are drawn.
-fn lead_on(app: App, rows: Memo<Vec<Row>>, place: Place) {
-    match rows.with_untracked(|rows| rows::after(rows, place)) {
+fn lead_on(app: App, form: Form, place: Place) {
+    match rows::after(&untrack(|| (form.rows)(app)), place) {
         Some(next) => open(app, next),
-        None => app.active.set(None),
+        None => {
+            app.active.set(None);
+            page::focus("main-button");
+        }
     }
 }
 
 /// Opens a place: its keys when it is a number, and the focus.
-pub fn open(app: App, place: Place) {
+fn open(app: App, place: Place) {
     app.active.set(if let Place::Number(field) = place { Some(field) } else { None });
     page::focus(place.id());
 }
 
 /// The Next key: on to the next row, unless the number is wrong: then its sentence is said.
-pub fn next(app: App, rows: Memo<Vec<Row>>) {
+pub fn next(app: App, form: Form) {
     let Some(field) = app.active.get_untracked() else { return };
-    let reading = app.sheet.with_untracked(|sheet| sheet.read(field, app.group()));
-    if let Reading::Wrong(words) = reading {
-        app.left.update(|left| left.push(field));
-        app.tell(&words);
-        return;
+    if !app.says_wrong(field) {
+        lead_on(app, form, Place::Number(field));
     }
-    lead_on(app, rows, Place::Number(field));
 }
 
-/// Whether the form may be written; if not, says why and goes to the first fault.
-pub fn may_write(app: App, rows: Memo<Vec<Row>>) -> bool {
-    let faults =
-        app.sheet.with_untracked(|sheet| rows.with_untracked(|rows| rows::faults(sheet, rows, app.group())));
+/// Whether the form may be written; if not, says why and goes to the first fault or question.
+pub fn may_write(app: App, form: Form) -> bool {
+    let faults = untrack(|| app.sheet.with(|sheet| rows::faults(sheet, &(form.rows)(app), app.group())));
     app.asked.set(true);
-    let Some((place, words)) = faults.into_iter().next() else { return true };
-    app.tell(&words);
-    open(app, place);
-    false
+    if let Some((place, words)) = faults.into_iter().next() {
+        app.tell(&words);
+        open(app, place);
+        return false;
+    }
+    let open = untrack(|| (form.ask)(app));
+    if let Some(question) = open.first() {
+        app.active.set(None);
+        app.tell(&question.words);
+        page::focus("questions");
+    }
+    open.is_empty()
 }

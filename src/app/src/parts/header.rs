@@ -2,7 +2,8 @@
 
 use leptos::prelude::*;
 
-use crate::state::app::{App, app};
+use super::html::{tag, text};
+use crate::state::app::App;
 use crate::state::room::Room;
 use crate::words::{change, form, header as words, now, person, record, start, values};
 
@@ -20,8 +21,7 @@ pub const fn title(room: Room) -> &'static str {
 }
 
 /// Where the way back leads.
-fn back(app: App, room: Room) -> Option<Room> {
-    let open = app.open.with(Option::is_some);
+const fn back(room: Room, open: bool) -> Option<Room> {
     match room {
         Room::Start | Room::Now | Room::Change => None,
         Room::Settings if !open => Some(Room::Gas),
@@ -30,41 +30,41 @@ fn back(app: App, room: Room) -> Option<Room> {
     }
 }
 
-/// The header of the open room.
-#[component]
-pub fn Header() -> impl IntoView {
-    let app = app();
-    let heading = move || title(app.room.get());
-    let main_room = move || matches!(app.room.get(), Room::Now | Room::Change);
-    let back_link = move || {
-        back(app, app.room.get())
-            .map(|room| view! { <a class="header-link" href=room.hash()>{words::BACK}</a> })
-    };
+fn link(class: &str, room: Room, name: &str, words: &str) -> String {
+    tag("a", &[("class", class), ("href", room.hash()), ("aria-label", name)], &text(words))
+}
+
+/// The header of the open room: links around its title.
+pub fn header(app: App) -> AnyView {
+    let main = move || matches!(app.room.get(), Room::Now | Room::Change) && app.open.with(Option::is_some);
     let case_link = move || {
-        let on_sheet = app.room.get() == Room::Person || app.room.get() == Room::Start;
-        let label = app.label().filter(|_| !on_sheet)?;
-        let spoken = words::case(&label);
-        Some(view! {
-            <a class="header-link header-case" href=Room::Person.hash() aria-label=spoken>{label}</a>
-        })
+        let on_sheet = matches!(app.room.get(), Room::Person | Room::Start);
+        let label = app.label().filter(|_| !on_sheet);
+        label.map(|label| link("header-link header-case", Room::Person, &words::case(&label), &label))
     };
-    let record_link = move || {
-        (main_room() && app.open.with(Option::is_some)).then(|| {
-            view! {
-                <span class="header-time">{move || values::clock(app.now.get().wall, &app.now.get())}</span>
-                <a class="header-link" href=Room::Record.hash()>{record::TITLE}</a>
-            }
-        })
+    let left = move || {
+        if main() {
+            return case_link().unwrap_or_default();
+        }
+        let back = back(app.room.get(), app.open.with(Option::is_some));
+        back.map(|room| link("header-link", room, words::BACK, words::BACK)).unwrap_or_default()
+    };
+    let right = move || {
+        if !main() {
+            return case_link().unwrap_or_default();
+        }
+        let now = app.now.get();
+        tag("span", &[("class", "header-time")], &text(&values::clock(now.wall, &now)))
+            + &link("header-link", Room::Record, record::TITLE, record::TITLE)
     };
     view! {
         <header class="header">
-            {back_link}
-            {move || main_room().then(case_link)}
-            <h1 id="room-title" tabindex="-1" class:unseen=move || {
-                main_room() && app.open.with(Option::is_some)
-            }>{heading}</h1>
-            {record_link}
-            {move || (!main_room()).then(case_link)}
+            <div class="header-side" inner_html=move || left()></div>
+            <h1 id="room-title" tabindex="-1" class=move || if main() { "unseen" } else { "" }>
+                {move || title(app.room.get()).to_owned()}
+            </h1>
+            <div class="header-side" inner_html=move || right()></div>
         </header>
     }
+    .into_any()
 }

@@ -1,12 +1,13 @@
-//! The keypad: large keys that act on release. A physical keyboard types into the field itself, so the keys
-//! are not in the tab order; touch exploration finds them.
+//! The keypad: large keys that act on release, and the strip that stands in its place while the phone's is used.
 
-use leptos::ev::{MouseEvent, PointerEvent};
+use leptos::ev::MouseEvent;
 use leptos::prelude::*;
 
-use super::keys::{Bounce, Key, press, within_slop};
+use super::buttons::{perhaps, press};
+use super::keys::{Bounce, Key, press as pressed};
+use super::touch::{Look, key};
 use crate::device::{clock, files, page};
-use crate::state::app::{App, app};
+use crate::state::app::App;
 use crate::words::form as words;
 
 /// What a key does.
@@ -43,124 +44,74 @@ const KEYS: [(&str, Act); 16] = [
     (words::NEXT, Act::Next),
 ];
 
-/// Our keypad, or the strip that stands in its place while the phone's is used. Nothing while no field is open.
-#[component]
-pub fn Keypad(
-    /// Goes to the next field.
-    next: Callback<()>,
-) -> impl IntoView {
-    let app = app();
-    move || {
-        app.active.get().is_some().then(|| {
-            if app.phone_keys.get() {
-                view! { <PhoneStrip next /> }.into_any()
-            } else {
-                view! { <Keys next /> }.into_any()
-            }
-        })
-    }
+/// The keypad, while a field is open; `next` goes to the next field.
+pub fn keypad(app: App, next: impl Fn() + Copy + Send + 'static) -> AnyView {
+    let open = Memo::new(move |_| app.active.get().is_some());
+    let keys = move || {
+        perhaps(open.get().then(|| if app.phone_keys.get() { strip(app, next) } else { all(app, next) }))
+    };
+    view! { {move || keys()} }.into_any()
 }
 
-#[component]
-fn PhoneStrip(next: Callback<()>) -> impl IntoView {
-    let app = app();
-    let ours = move |_| {
+fn strip(app: App, next: impl Fn() + Copy + 'static) -> AnyView {
+    let ours = move || {
         app.use_phone_keys(false);
-        if let Some(field) = app.active.get_untracked() {
-            page::focus(field.spec().id);
-        }
+        refocus(app);
     };
+    let close = move || app.active.set(None);
     view! {
-        <div class="strip">
-            <button type="button" class="plain" on:mousedown=keep_focus on:click=ours>{words::OUR_KEYS}</button>
-            <button type="button" class="plain" on:mousedown=keep_focus on:click=move |_| next.run(())>
-                {words::NEXT}
-            </button>
+        <div class="strip" on:mousedown=|event: MouseEvent| event.prevent_default()>
+            <button type="button" class="plain" on:click=press(ours)>{words::OUR_KEYS}</button>
+            <button type="button" class="plain" on:click=press(close)>{words::CLOSE_KEYS}</button>
+            <button type="button" class="plain" on:click=press(next)>{words::NEXT}</button>
         </div>
     }
+    .into_any()
 }
 
-#[component]
-fn Keys(next: Callback<()>) -> impl IntoView {
-    let app = app();
+fn all(app: App, next: impl Fn() + Copy + 'static) -> AnyView {
     let bounce = StoredValue::new(Bounce::default());
-    let act = Callback::new(move |act: Act| match act {
-        Act::Next => next.run(()),
-        Act::Paste => paste(app),
-        Act::PhoneKeys => to_phone_keys(app),
-        Act::Close => app.active.set(None),
+    let mut keys = vec![];
+    for (sign, what) in KEYS {
+        let class = match what {
+            Act::Next => "key key-next",
+            Act::Type(Key::Digit(_) | Key::Point) => "key",
+            _ => "key key-word",
+        };
+        let act = move || {
+            if what == Act::Next {
+                next();
+            } else {
+                act(app, what, bounce);
+            }
+            true
+        };
+        keys.push(key(Look { sign, name: sign.to_owned(), class, repeats: false }, Box::new(act)));
+    }
+    view! { <div class="keypad" role="group" aria-label=words::KEYPAD>{keys}</div> }.into_any()
+}
+
+fn act(app: App, what: Act, bounce: StoredValue<Bounce>) {
+    match what {
         Act::Type(key) => {
             let counts = bounce.try_update_value(|bounce| bounce.counts(key, clock::since_load_ms()));
             if counts == Some(true) {
                 type_key(app, key);
             }
         }
-    });
-    view! {
-        <div class="keypad" role="group" aria-label=words::KEYPAD>
-            {KEYS.map(|(label, what)| view! { <KeyButton label what act /> }).collect_view()}
-        </div>
-    }
-}
-
-/// A press and its release with the same finger on the same key, or a click without either: from a switch
-/// or a screen reader.
-#[component]
-fn KeyButton(label: &'static str, what: Act, act: Callback<Act>) -> impl IntoView {
-    let down = StoredValue::new(None::<(i32, f64, f64)>);
-    let acted = StoredValue::new(f64::NEG_INFINITY);
-    let pressed = move |event: PointerEvent| {
-        down.set_value(Some((event.pointer_id(), f64::from(event.client_x()), f64::from(event.client_y()))));
-    };
-    let released = move |event: PointerEvent| {
-        let (x, y) = (f64::from(event.client_x()), f64::from(event.client_y()));
-        let hit = down.get_value().is_some_and(|(id, x0, y0)| {
-            id == event.pointer_id() && within_slop(x0, y0, x, y)
-        });
-        down.set_value(None);
-        // A slide off the key is neither a press nor the click that may follow it.
-        acted.set_value(event.time_stamp());
-        if hit {
-            act.run(what);
+        Act::Paste => paste(app),
+        Act::PhoneKeys => {
+            app.use_phone_keys(true);
+            refocus(app);
         }
-    };
-    let clicked = move |event: MouseEvent| {
-        if event.time_stamp() - acted.get_value() > AFTER_POINTER_MS {
-            act.run(what);
-        }
-    };
-    let class = match what {
-        Act::Next => "key key-next",
-        Act::Type(Key::Digit(_) | Key::Point) => "key",
-        _ => "key key-word",
-    };
-    view! {
-        <button
-            type="button"
-            class=class
-            tabindex="-1"
-            on:mousedown=keep_focus
-            on:pointerdown=pressed
-            on:pointerup=released
-            on:click=clicked
-        >
-            {label}
-        </button>
+        Act::Close | Act::Next => app.active.set(None),
     }
-}
-
-/// A click this soon after a release belongs to it.
-const AFTER_POINTER_MS: f64 = 400.0;
-
-/// The field keeps its focus while keys are pressed.
-fn keep_focus(event: MouseEvent) {
-    event.prevent_default();
 }
 
 fn type_key(app: App, key: Key) {
     let Some(field) = app.active.get_untracked() else { return };
     let text = app.sheet.with_untracked(|sheet| sheet.text(field).to_owned());
-    match press(&text, key, field.spec().keys) {
+    match pressed(&text, key, field.spec().keys) {
         Ok(text) => app.sheet.update(|sheet| sheet.set_text(field, text)),
         Err(words) => app.tell(words),
     }
@@ -173,14 +124,13 @@ fn paste(app: App) {
             let text: String = text.chars().take(16).collect();
             app.sheet.update(|sheet| sheet.set_text(field, text));
             // What was pasted is judged at once: nobody goes on typing it.
-            app.left.update(|left| left.push(field));
+            app.leave(field);
         }
         _ => app.trouble.set(Some(words::NO_PASTE.to_owned())),
     });
 }
 
-fn to_phone_keys(app: App) {
-    app.use_phone_keys(true);
+fn refocus(app: App) {
     if let Some(field) = app.active.get_untracked() {
         page::refocus(field.spec().id);
     }

@@ -93,6 +93,19 @@ pub fn within_slop(x0: f64, y0: f64, x: f64, y: f64) -> bool {
     dx * dx + dy * dy <= SLOP_PX * SLOP_PX
 }
 
+/// One step from `value`, and whether a held key stops there: at the old value and at the limits.
+pub fn step(value: f64, by: f64, old: f64, least: f64, most: f64) -> (f64, bool) {
+    let next = value + by;
+    let crosses = (value - old) * (next - old) <= 0.0 && value != old;
+    if crosses {
+        (old, true)
+    } else if next > most || next < least {
+        (value, true)
+    } else {
+        (next, false)
+    }
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -159,5 +172,15 @@ mod tests {
     fn a_finger_may_slide_twelve_pixels() {
         assert!(within_slop(0.0, 0.0, 0.0, 12.0));
         assert!(!within_slop(0.0, 0.0, 9.0, 9.0));
+    }
+
+    #[test]
+    fn a_held_key_stops_at_the_old_value_and_at_the_limits() {
+        assert_eq!(step(18.0, 1.0, 18.0, 2.0, 80.0), (19.0, false));
+        assert_eq!(step(19.0, -1.0, 18.0, 2.0, 80.0), (18.0, true));
+        assert_eq!(step(345.0, -10.0, 340.0, 50.0, 2000.0), (340.0, true));
+        assert_eq!(step(80.0, 1.0, 18.0, 2.0, 80.0), (80.0, true));
+        assert_eq!(step(2.0, -1.0, 18.0, 2.0, 80.0), (2.0, true));
+        assert_eq!(step(18.0, -1.0, 18.0, 2.0, 80.0), (17.0, false));
     }
 }

@@ -2,49 +2,43 @@
 
 use leptos::prelude::*;
 
+use super::buttons::plain;
 use crate::device::ready;
-use crate::state::app::app;
+use crate::state::app::App;
 use crate::words::start as words;
 
 /// The notices that apply now.
-#[component]
-pub fn Notices() -> impl IntoView {
-    let app = app();
+pub fn notices(app: App) -> AnyView {
+    let trouble = move || app.trouble.get();
+    let unsaved = move || match app.unsaved() {
+        0 => None,
+        count => Some(words::unsaved(count)),
+    };
     let demo = move || app.label().is_some_and(|label| label == words::DEMO_LABEL);
-    let trouble = move || {
-        app.trouble.get().map(|said| view! { <p class="notice notice-trouble" role="alert">{said}</p> })
-    };
-    let unsaved = move || {
-        let count = app.unsaved();
-        (count > 0).then(|| view! { <p class="notice notice-trouble" role="alert">{words::unsaved(count)}</p> })
-    };
-    let version = move || {
-        (app.update.get() == "ready").then(|| {
-            view! {
-                <p class="notice">
-                    {words::NEW_VERSION} " "
-                    <button type="button" class="plain" on:click=|_| ready::take_update()>{words::TAKE_IT}</button>
-                </p>
-            }
-        })
-    };
     view! {
         <div class="notices">
-            {trouble} {unsaved} {version}
-            {move || demo().then(|| view! { <p class="notice">{words::DEMO_OPEN}</p> })}
+            <p class="notice notice-trouble" role="alert" hidden=move || trouble().is_none()>
+                {move || trouble().unwrap_or_default()}
+            </p>
+            <p class="notice notice-trouble" role="alert" hidden=move || unsaved().is_none()>
+                {move || unsaved().unwrap_or_default()}
+            </p>
+            <div class="notice" hidden=move || app.update.get() != "ready">
+                {words::NEW_VERSION} {plain(words::TAKE_IT.to_owned(), ready::take_update)}
+            </div>
+            <p class="notice" hidden=move || !demo()>{words::DEMO_OPEN}</p>
         </div>
     }
+    .into_any()
 }
 
 /// Whether it works without signal, in a line.
-#[component]
-pub fn Readiness() -> impl IntoView {
-    let app = app();
+pub fn readiness(app: App) -> AnyView {
     let said = move || match app.offline.get().as_str() {
         "ready" => words::READY,
         "no" => words::NOT_READY,
         "unsupported" => words::NEVER_READY,
         _ => words::GETTING_READY,
     };
-    view! { <p class="readiness" role="status">{said}</p> }
+    view! { <p class="readiness" role="status">{move || said().to_owned()}</p> }.into_any()
 }

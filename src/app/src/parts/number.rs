@@ -1,115 +1,100 @@
 //! A number field. The raw text is the state; the parsed number stands beside it in the sheet.
 
-use leptos::ev::KeyboardEvent;
+use leptos::ev::{FocusEvent, KeyboardEvent};
 use leptos::prelude::*;
 
-use super::chips::Fault;
+use super::buttons::press;
+use super::chips::error;
 use crate::device::page;
-use crate::state::app::app;
+use crate::state::app::App;
 use crate::state::field::Field;
 use crate::words::form as words;
 
-/// A number field with its label, unit and error.
-#[component]
-pub fn NumberField(
-    /// The field.
+/// A number field with its label, unit and error; `hint` is the old value, `next` runs at Enter.
+pub fn number_field(
+    app: App,
     field: Field,
-    /// What is wrong, as a sentence.
-    #[prop(into)]
-    fault: Signal<Option<String>>,
-    /// The old value as a hint.
-    #[prop(into)]
-    hint: Signal<Option<String>>,
-    /// Runs when Enter is pressed.
-    next: Callback<()>,
-) -> impl IntoView {
-    let app = app();
+    fault: impl Fn() -> Option<String> + Copy + Send + Sync + 'static,
+    hint: fn(App, Field) -> Option<String>,
+    next: impl Fn() + Copy + 'static,
+) -> AnyView {
     let spec = field.spec();
-    let fault_id = format!("{}-fault", spec.id);
-    let label = Memo::new(move |_| app.sheet.with(|sheet| sheet.label(field, app.group())));
-    let unit = Memo::new(move |_| app.sheet.with(|sheet| sheet.unit(field, app.group())));
-    let active = move || app.active.get() == Some(field);
+    let label = move || app.sheet.with(|sheet| sheet.label(field, app.group())).to_owned();
+    let unit = move || app.sheet.with(|sheet| sheet.unit(field, app.group())).to_owned();
+    let class = move || if app.active.get() == Some(field) { "field number active" } else { "field number" };
     let unit_view = if field.takes_kpa() {
-        let change = move |_| app.sheet.update(|sheet| sheet.kpa = !sheet.kpa);
+        let change = move || app.sheet.update(|sheet| sheet.kpa = !sheet.kpa);
         view! {
-            <button type="button" class="unit unit-button" on:click=change aria-describedby="unit-note">
-                {unit}
+            <button type="button" class="unit unit-button" on:click=press(change)>
+                {move || unit()}
+                <span class="unseen">{words::OTHER_UNIT}</span>
             </button>
-            <span class="unseen" id="unit-note">{words::OTHER_UNIT}</span>
         }
         .into_any()
     } else {
-        view! { <span class="unit" aria-hidden="true">{unit}</span> }.into_any()
+        view! { <span class="unit">{move || unit()}</span> }.into_any()
     };
     view! {
-        <div class="field number" class:active=active>
-            <label class="field-label" for=spec.id>
-                {label}
-                <span class="unseen">{move || spoken_unit(unit.get())}</span>
-            </label>
-            <NumberInput field next described=fault_id.clone() fault hint />
+        <div class=move || class()>
+            <label class="field-label" for=spec.id>{move || label()}</label>
+            <input
+                type="text"
+                id=spec.id
+                class="number-input"
+                autocomplete="off"
+                maxlength="16"
+                inputmode=move || input_mode(app)
+                placeholder=move || hint(app, field).unwrap_or_default()
+                aria-invalid=move || if fault().is_some() { "true" } else { "false" }
+                aria-describedby=spec.fault_id
+                prop:value=move || app.sheet.with(|sheet| sheet.text(field).to_owned())
+                on:input=typing(app, field)
+                on:keydown=keys(app, next)
+                on:focus=opening(app, field)
+                on:blur=leaving(app, field)
+            />
             {unit_view}
-            <Fault id=fault_id words=fault />
+            {error(spec.fault_id, fault)}
         </div>
     }
+    .into_any()
 }
 
-fn spoken_unit(unit: &'static str) -> String {
-    if unit.is_empty() { String::new() } else { format!(", {unit}") }
+/// Our keypad needs none of the phone's.
+pub fn input_mode(app: App) -> &'static str {
+    if app.phone_keys.get() { "decimal" } else { "none" }
 }
 
-/// The input alone.
-#[component]
-pub fn NumberInput(
-    /// The field.
-    field: Field,
-    /// Runs when Enter is pressed.
-    next: Callback<()>,
-    /// Id of what describes it.
-    described: String,
-    /// What is wrong.
-    #[prop(into)]
-    fault: Signal<Option<String>>,
-    /// The old value as a hint.
-    #[prop(into)]
-    hint: Signal<Option<String>>,
-) -> impl IntoView {
-    let app = app();
-    let text = Memo::new(move |_| app.sheet.with(|sheet| sheet.text(field).to_owned()));
-    let typed = move |event: web_sys::Event| {
+/// What was typed goes into the sheet as it is.
+pub fn typing(app: App, field: Field) -> Box<dyn FnMut(web_sys::Event)> {
+    Box::new(move |event| {
         if let Some(input) = page::input(&event) {
             app.sheet.update(|sheet| sheet.set_text(field, input.value()));
         }
-    };
-    let keyed = move |event: KeyboardEvent| match event.key().as_str() {
+    })
+}
+
+/// Enter goes on, Escape closes the keypad.
+pub fn keys(app: App, next: impl Fn() + 'static) -> Box<dyn FnMut(KeyboardEvent)> {
+    Box::new(move |event| match event.key().as_str() {
         "Enter" => {
             event.prevent_default();
-            next.run(());
+            next();
         }
         "Escape" => app.active.set(None),
         _ => {}
-    };
-    view! {
-        <input
-            type="text"
-            id=field.spec().id
-            class="number-input"
-            autocomplete="off"
-            maxlength="16"
-            inputmode=move || if app.phone_keys.get() { "decimal" } else { "none" }
-            placeholder=move || hint.get().unwrap_or_default()
-            aria-invalid=move || if fault.get().is_some() { "true" } else { "false" }
-            aria-describedby=described
-            prop:value=text
-            on:input=typed
-            on:keydown=keyed
-            on:focus=move |_| {
-                app.active.set(Some(field));
-                page::into_sight(field.spec().id);
-            }
-            on:blur=move |_| {
-                app.left.update(|left| if !left.contains(&field) { left.push(field) });
-            }
-        />
-    }
+    })
+}
+
+/// A field that gets the focus opens the keypad and stays in sight above it.
+pub fn opening(app: App, field: Field) -> Box<dyn FnMut(FocusEvent)> {
+    Box::new(move |_| {
+        app.active.set(Some(field));
+        page::into_sight(field.spec().id);
+    })
+}
+
+/// A field that was left may say what is wrong in it.
+pub fn leaving(app: App, field: Field) -> Box<dyn FnMut(FocusEvent)> {
+    Box::new(move |_| app.leave(field))
 }

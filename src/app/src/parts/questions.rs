@@ -3,59 +3,53 @@
 use bedside::{Question, QuestionKind};
 use leptos::prelude::*;
 
+use super::buttons::plain;
 use crate::device::page;
-use crate::state::app::app;
+use crate::state::app::App;
 use crate::state::field::Field;
 use crate::words::form as words;
 use crate::words::spoken::spoken;
 
-/// The questions still open; `then` runs after one was answered.
-#[component]
-pub fn Questions(
-    /// The questions.
-    #[prop(into)]
-    open: Signal<Vec<Question>>,
-    /// Where Mend it leads.
+/// The questions still open; Mend it leads to `mend`, and `then` runs after an answer.
+pub fn questions(
+    app: App,
+    open: Memo<Vec<Question>>,
     mend: Field,
-    /// Runs after an answer.
-    then: Callback<()>,
-) -> impl IntoView {
+    then: impl Fn() + Copy + Send + 'static,
+) -> AnyView {
+    let all = move || {
+        let mut all = vec![];
+        for question in open.get() {
+            all.push(one(app, question, mend, then));
+        }
+        all.into_any()
+    };
     view! {
         <div id="questions" tabindex="-1" class="questions" hidden=move || open.with(Vec::is_empty)>
-            {move || {
-                open.get().into_iter().map(|question| view! { <One question mend then /> }).collect_view()
-            }}
+            {move || all()}
         </div>
     }
+    .into_any()
 }
 
-#[component]
-fn One(question: Question, mend: Field, then: Callback<()>) -> impl IntoView {
-    let app = app();
+fn one(app: App, question: Question, mend: Field, then: impl Fn() + Copy + 'static) -> AnyView {
     let said = question.words.clone();
-    let as_typed = move |_| {
+    let as_typed = move || {
         app.sheet.update(|sheet| sheet.answered.push(said.clone()));
-        then.run(());
+        then();
     };
     let answers = match question.kind {
         QuestionKind::MmhgOrKpa { typed, as_kpa_mmhg } => {
-            let in_kpa = move |_| {
+            let in_kpa = move || {
                 app.sheet.update(|sheet| sheet.kpa = true);
-                then.run(());
+                then();
             };
-            view! {
-                <button type="button" class="plain" on:click=as_typed>{words::is_mmhg(typed)}</button>
-                <button type="button" class="plain" on:click=in_kpa>{words::is_kpa(typed, as_kpa_mmhg)}</button>
-            }
-            .into_any()
+            vec![plain(words::is_mmhg(typed), as_typed), plain(words::is_kpa(typed, as_kpa_mmhg), in_kpa)]
         }
-        QuestionKind::Hco3Contradicts { .. } | QuestionKind::Unusual => view! {
-            <button type="button" class="plain" on:click=as_typed>{words::AS_TYPED}</button>
-            <button type="button" class="plain" on:click=move |_| page::focus(mend.spec().id)>
-                {words::MEND_IT}
-            </button>
-        }
-        .into_any(),
+        QuestionKind::Hco3Contradicts { .. } | QuestionKind::Unusual => vec![
+            plain(words::AS_TYPED.to_owned(), as_typed),
+            plain(words::MEND_IT.to_owned(), move || page::focus(mend.spec().id)),
+        ],
     };
     let name = spoken(&question.words);
     view! {
@@ -64,4 +58,5 @@ fn One(question: Question, mend: Field, then: Callback<()>) -> impl IntoView {
             <div class="two-buttons">{answers}</div>
         </div>
     }
+    .into_any()
 }

@@ -1,126 +1,71 @@
 //! Where PaCO2 and pH are at this minute, where they are heading, when they have settled, and what would help.
 
 mod answer;
-mod doubt;
-mod held;
+mod asked;
 mod narrow;
 mod offers;
 
-use bedside::{Answer, Caution, Forecast, Freshness, Status};
-use case::{EntryKind, Now as Clock};
+use bedside::{Freshness, Status};
+use case::{EntryKind, Gas, Moment};
 use leptos::prelude::*;
 
 use crate::device::page;
-use crate::parts::chart::{Chart, Picture, last_gas};
-use crate::parts::main_button::MainButton;
-use crate::state::app::{App, app};
-use crate::state::outlook;
+use crate::parts::buttons::{link, main_button, perhaps};
+use crate::parts::chart::{Picture, drawing, reading};
+use crate::state::app::App;
+use crate::state::present::Present;
 use crate::state::room::Room;
 use crate::words::now as words;
 
 /// Height of the chart, in its own units.
 const CHART_HEIGHT: f64 = 300.0;
 
-/// What the study says at this minute.
-#[derive(Clone, PartialEq)]
-struct View {
-    now: Clock,
-    freshness: Freshness,
-    answer: Answer<Forecast>,
-    cautions: Vec<Caution>,
-}
-
-impl View {
-    fn of(app: App) -> Option<Self> {
-        let now = app.now.get();
-        app.study.with(|study| {
-            let study = study.as_ref()?;
-            let start = app.open.with(|open| outlook::start(&open.as_ref()?.case));
-            let minutes = outlook::minutes(start, &now);
-            Some(Self {
-                now,
-                freshness: study.freshness(&now),
-                answer: study.forecast(&now, None, &minutes),
-                cautions: study.cautions(&now),
-            })
-        })
-    }
-
-    /// The forecast, unless it is withheld or nobody has confirmed it for an hour.
-    fn shown(&self) -> Option<&Forecast> {
-        let expired = matches!(self.freshness, Freshness::Expired { .. });
-        outlook::value(&self.answer).filter(|_| !expired)
-    }
-
-    fn stale(&self) -> bool {
-        matches!(self.freshness, Freshness::StillSo { .. })
-    }
-
-    /// Whether it is still on its way: then the chart comes before the offers.
-    fn moving(&self) -> bool {
-        self.shown().is_some_and(|forecast| {
-            outlook::at(forecast, 0.0)
-                .is_some_and(|(paco2, _)| (paco2.p50 - forecast.settled.paco2_mmhg.p50).abs() >= 2.0)
-        })
-    }
-}
-
 /// The room.
-#[component]
-pub fn Now() -> impl IntoView {
-    let app = app();
-    let view = Memo::new(move |_| View::of(app));
+pub fn now(app: App) -> AnyView {
     let picture = Memo::new(move |_| {
-        view.with(|view| {
-            let view = view.as_ref()?;
-            Picture::new(view.shown()?, None, &app.case(), &view.now, CHART_HEIGHT, view.stale())
+        app.present.with(|present| {
+            let present = present.as_ref()?;
+            let case = app.case();
+            Picture::new(present.shown()?, None, &case, &present.now, CHART_HEIGHT, present.is_stale())
         })
     });
-    let moving = Memo::new(move |_| view.with(|view| view.as_ref().is_some_and(View::moving)));
-    let side = move || {
-        let chart = view! { <div class="chart-side"><Chart picture /></div> };
-        let offers = view! { <offers::Offers view /> };
-        if moving.get() {
-            view! { {chart} {offers} }.into_any()
-        } else {
-            view! { {offers} {chart} }.into_any()
+    let at = RwSignal::new(0);
+    let moving = Memo::new(move |_| app.present.with(|p| p.as_ref().is_some_and(Present::moves)));
+    let middle = move || {
+        let mut both = vec![
+            view! { <div class="chart-side">{drawing(picture, at)} {reading(picture, at)}</div> }.into_any(),
+            offers::offers(app),
+        ];
+        if !moving.get() {
+            both.reverse();
         }
+        both.into_any()
+    };
+    let next = Memo::new(move |_| Next::of(app));
+    let gas = move || {
+        perhaps((next.get() != Next::TypeGas).then(|| link(words::NEXT_GAS.to_owned(), Room::Gas.hash())))
     };
     view! {
         <div class="scroll now">
-            <answer::AnswerView view />
-            <doubt::DoubtView />
-            <held::Held />
-            {side}
-            <narrow::Narrow view />
+            {answer::answer(app)}
+            {asked::doubt(app)}
+            {asked::held(app)}
+            {move || middle()}
+            {narrow::narrow(app)}
         </div>
         <div class="dock">
-            <div class="dock-buttons"><Buttons view /></div>
+            <div class="dock-buttons">
+                {move || gas()}
+                {main_button(app, |app| Next::of(app).label(app), |app| Next::of(app).more(app), |app| {
+                    untrack(|| Next::of(app)).press(app);
+                })}
+            </div>
         </div>
     }
+    .into_any()
 }
 
-/// The next action, named by the state of the case, and the other one.
-#[component]
-fn Buttons(view: Memo<Option<View>>) -> impl IntoView {
-    let app = app();
-    let next = Memo::new(move |_| view.with(|view| Next::of(app, view.as_ref())));
-    move || {
-        let next = next.get();
-        let label = next.label(app);
-        let more = if next == Next::StillSo { app.still() } else { None };
-        let press = Callback::new(move |()| next.press(app));
-        let gas = (next != Next::TypeGas).then(|| {
-            view! { <a class="plain" href=Room::Gas.hash()>{words::NEXT_GAS}</a> }
-        });
-        view! {
-            {gas}
-            <MainButton label more press />
-        }
-    }
-}
-
-/// The next action.
+/// The next action, named by the state of the case.
 #[derive(Clone, Copy, PartialEq, Eq)]
 enum Next {
     TypeGas,
@@ -130,20 +75,18 @@ enum Next {
 }
 
 impl Next {
-    fn of(app: App, view: Option<&View>) -> Next {
-        let Some(view) = view else { return Next::TypeGas };
-        if app.case().gases().is_empty() {
-            return Next::TypeGas;
-        }
-        if app.in_force().airway.is_none() {
-            return Next::TypeSettings;
-        }
-        match view.freshness {
-            Freshness::NoEntries | Freshness::Expired { .. } => Next::TypeGas,
-            Freshness::StillSo { .. } => Next::StillSo,
-            Freshness::Fresh if view.answer.standing.status == Status::Withheld => Next::TypeGas,
-            Freshness::Fresh => Next::Try,
-        }
+    fn of(app: App) -> Next {
+        let (gases, airway) = (app.case().gases().len(), app.in_force().airway);
+        app.present.with(|present| match present {
+            Some(_) if gases > 0 && airway.is_none() => Next::TypeSettings,
+            Some(present) if gases > 0 => match present.freshness {
+                Freshness::NoEntries | Freshness::Expired { .. } => Next::TypeGas,
+                Freshness::StillSo { .. } => Next::StillSo,
+                Freshness::Fresh if present.answer.standing.status == Status::Withheld => Next::TypeGas,
+                Freshness::Fresh => Next::Try,
+            },
+            _ => Next::TypeGas,
+        })
     }
 
     fn label(self, app: App) -> String {
@@ -153,6 +96,10 @@ impl Next {
             Next::StillSo => words::still_so_button(&app.label().unwrap_or_default()),
             Next::Try => words::TRY_A_RATE.to_owned(),
         }
+    }
+
+    fn more(self, app: App) -> Option<String> {
+        if self == Next::StillSo { app.still() } else { None }
     }
 
     fn press(self, app: App) {
@@ -169,4 +116,9 @@ impl Next {
 fn write_unchanged(app: App) {
     let now = app.tick();
     app.write(vec![(now.wall, EntryKind::Unchanged)]);
+}
+
+/// The last gas of the case.
+fn last_gas(app: App) -> Option<(Gas, Moment)> {
+    app.case().gases().last().map(|(_, at, gas)| (*gas, *at))
 }

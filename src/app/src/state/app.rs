@@ -1,14 +1,17 @@
 //! The state that belongs to the root and lives as long as the page.
 
+use std::rc::Rc;
 use std::sync::Arc;
 
 use bedside::{Options, Study};
 use case::{Case, Entry, EntryId, EntryKind, Moment, Now};
 use leptos::prelude::*;
 use logbook::{Book, BookError, CaseId, Shelf};
+use send_wrapper::SendWrapper;
 use units::AgeGroup;
 
-use super::{demo, draft, field::Field, room::Room, rows, sheet::Sheet};
+use super::present::{Present, Trial};
+use super::{demo, draft, field::Field, room::Room, rows, sheet::Reading, sheet::Sheet, writing};
 use crate::device::{clock, ids, page, ready, shelf::LocalShelf};
 use crate::words::{person, start as words};
 
@@ -30,7 +33,11 @@ pub struct App {
     /// The open case; the same until something is written.
     pub open: Memo<Option<Open>>,
     /// Its study, made once an entry.
-    pub study: Memo<Option<Arc<Study>>>,
+    pub study: Memo<Option<Studied>>,
+    /// What the study says at this minute.
+    pub present: Memo<Option<Present>>,
+    /// The change that is tried.
+    pub trial: Memo<Option<Trial>>,
     /// The clock, moved each minute.
     pub now: RwSignal<Now>,
     /// The room that is open.
@@ -80,18 +87,36 @@ impl App {
             })
         });
         let study = Memo::new_with_compare(
-            move |_| open.with(|open| Some(Arc::new(Study::new(&open.as_ref()?.case, Options::default())))),
+            move |_| open.with(|open| open.as_ref().map(studied)),
             |old, new| !same(old, new),
         );
+        let now = RwSignal::new(clock::now());
+        let sheet = RwSignal::new(Sheet::default());
+        let present = Memo::new(move |_| {
+            let now = now.get();
+            study.with(|study| open.with(|o| Some(Present::of(study.as_ref()?, &o.as_ref()?.case, &now))))
+        });
+        let trial = Memo::new(move |_| {
+            let now = now.get();
+            study.with(|study| open.with(|open| sheet.with(|sheet| {
+                let case = &open.as_ref()?.case;
+                let in_force = case.settings_at(now.wall);
+                in_force.airway?;
+                let change = writing::change(sheet, &in_force, case.person.age_group());
+                Some(Trial::of(study.as_ref()?, case, &now, &in_force, change))
+            })))
+        });
         let app = Self {
             book,
             shelf: StoredValue::new_local(shelf),
             revision,
             open,
             study,
-            now: RwSignal::new(clock::now()),
+            present,
+            trial,
+            now,
             room: RwSignal::new(Room::Start),
-            sheet: RwSignal::new(Sheet::default()),
+            sheet,
             active: RwSignal::new(None),
             left: RwSignal::new(vec![]),
             asked: RwSignal::new(false),
@@ -101,14 +126,15 @@ impl App {
             offline: ready::offline(),
             update: ready::update(),
         };
-        app.room.set(app.room_at(&page::hash()));
         app.sheet.set(app.kept_draft());
+        app.room.set(app.room_at(&page::hash()));
+        app.enter(&page::hash());
         app
     }
 
     /// Follows the address, the clock, and keeps the draft.
     pub fn follow(self) {
-        page::on_hash(move |hash| self.enter(self.room_at(&hash)));
+        page::on_hash(move |hash| self.enter(&hash));
         clock::each_minute(move |now| {
             self.now.try_set(now);
         });
@@ -125,7 +151,15 @@ impl App {
         Room::at(hash).unwrap_or(if open { Room::Now } else { Room::Start })
     }
 
-    fn enter(self, room: Room) {
+    /// Goes to the room of an address. One that names settings to try ("#/change?rate=22") sets them once and
+    /// gives way to the plain address, so that Back does not undo what was stepped since.
+    fn enter(self, hash: &str) {
+        if let Some(tried) = hash.strip_prefix(Room::Change.hash()).and_then(|rest| rest.strip_prefix('?')) {
+            self.sheet.update(|sheet| writing::try_settings(sheet, tried));
+            page::go_instead(Room::Change.hash());
+            return;
+        }
+        let room = self.room_at(hash);
         if self.room.get_untracked() != room {
             self.active.set(None);
             self.left.set(vec![]);
@@ -204,6 +238,29 @@ impl App {
     /// Tells a screen reader.
     pub fn tell(self, words: &str) {
         self.told.set(crate::words::spoken::spoken(words));
+    }
+
+    /// The questions that were not answered yet, by their words: another figure asks anew.
+    pub fn unanswered(self, questions: Vec<bedside::Question>) -> Vec<bedside::Question> {
+        self.sheet.with(|sheet| questions.into_iter().filter(|q| !sheet.answered.contains(&q.words)).collect())
+    }
+
+    /// A field was left: from now on it says what is wrong in it.
+    pub fn leave(self, field: Field) {
+        self.left.update(|left| {
+            if !left.contains(&field) {
+                left.push(field);
+            }
+        });
+    }
+
+    /// Whether what stands in `field` is wrong; then it is said.
+    pub fn says_wrong(self, field: Field) -> bool {
+        let reading = untrack(|| self.sheet.with(|sheet| sheet.read(field, self.group())));
+        let Reading::Wrong(words) = reading else { return false };
+        self.leave(field);
+        self.tell(&words);
+        true
     }
 
     /// Entries that are only in memory.
@@ -365,15 +422,17 @@ impl App {
     }
 }
 
-fn same(old: Option<&Option<Arc<Study>>>, new: Option<&Option<Arc<Study>>>) -> bool {
+/// A study, kept on the one thread a page has.
+pub type Studied = SendWrapper<Rc<Study>>;
+
+fn studied(open: &Open) -> Studied {
+    SendWrapper::new(Rc::new(Study::new(&open.case, Options::default())))
+}
+
+fn same(old: Option<&Option<Studied>>, new: Option<&Option<Studied>>) -> bool {
     match (old, new) {
-        (Some(Some(old)), Some(Some(new))) => Arc::ptr_eq(old, new),
+        (Some(Some(old)), Some(Some(new))) => Rc::ptr_eq(old, new),
         (Some(None), Some(None)) => true,
         _ => false,
     }
-}
-
-/// The app's state, from anywhere under the root.
-pub fn app() -> App {
-    expect_context::<App>()
 }

@@ -1,7 +1,7 @@
 //! The invented case, "Night ferry": a ventilated woman with pneumonia on a crossing. No real patient.
 
-use case::{EntryKind, Gas, HeightHow, Person, Sex, Settings, Site};
 use case::{Airway, Control, Effort, Leak};
+use case::{EntryKind, Gas, HeightHow, Person, Settings, Sex, Site};
 
 use crate::words::start::DEMO_NOTE;
 

@@ -39,6 +39,8 @@ pub enum Field {
     MinuteVolume,
     /// Pressure set above PEEP.
     InspiratoryPressure,
+    /// Exchanger, mount and tubing.
+    ApparatusDeadSpace,
     /// The case's label.
     Label,
     /// Age.
@@ -71,6 +73,8 @@ pub struct FieldSpec {
     pub name: &'static str,
     /// Id of its input on the page.
     pub id: &'static str,
+    /// Id of the sentence that says what is wrong in it.
+    pub fault_id: &'static str,
     /// What is typed; `None` for clock times and words.
     pub quantity: Option<Quantity>,
     /// Label where the quantity's own isn't exact enough.
@@ -79,9 +83,16 @@ pub struct FieldSpec {
     pub keys: KeyStyle,
 }
 
+/// The id of an input and that of its error.
+macro_rules! ids {
+    ($id:literal) => {
+        ($id, concat!($id, "-fault"))
+    };
+}
+
 impl Field {
     /// Every field, in the order of [`Field::index`].
-    pub const ALL: [Field; 23] = [
+    pub const ALL: [Field; 24] = [
         Field::DrawnClock,
         Field::Ph,
         Field::Pco2,
@@ -99,6 +110,7 @@ impl Field {
         Field::InspiratoryTime,
         Field::MinuteVolume,
         Field::InspiratoryPressure,
+        Field::ApparatusDeadSpace,
         Field::Label,
         Field::Age,
         Field::Height,
@@ -115,57 +127,66 @@ impl Field {
     /// Its row of the table.
     pub const fn spec(self) -> FieldSpec {
         use Quantity as Q;
+        type Ids = (&'static str, &'static str);
         const fn plain(
             name: &'static str,
-            id: &'static str,
+            (id, fault_id): Ids,
             quantity: Quantity,
             label: Option<&'static str>,
         ) -> FieldSpec {
-            FieldSpec { name, id, quantity: Some(quantity), label, keys: KeyStyle::Plain }
+            FieldSpec { name, id, fault_id, quantity: Some(quantity), label, keys: KeyStyle::Plain }
         }
-        const fn clock(name: &'static str, id: &'static str, label: &'static str) -> FieldSpec {
-            FieldSpec { name, id, quantity: None, label: Some(label), keys: KeyStyle::Clock }
+        const fn clock(name: &'static str, (id, fault_id): Ids, label: &'static str) -> FieldSpec {
+            FieldSpec { name, id, fault_id, quantity: None, label: Some(label), keys: KeyStyle::Clock }
         }
         match self {
-            Field::DrawnClock => clock("drawn_clock", "f-drawn", "Drawn at"),
-            Field::Ph => FieldSpec { keys: KeyStyle::Ph, ..plain("ph", "f-ph", Q::Ph, None) },
-            Field::Pco2 => plain("pco2", "f-pco2", Q::Paco2Mmhg, None),
-            Field::Po2 => plain("po2", "f-po2", Q::Po2Mmhg, None),
-            Field::Hco3 => plain("hco3", "f-hco3", Q::Hco3MmolL, Some("HCO₃ printed")),
-            Field::Hb => plain("hb", "f-hb", Q::HbGDl, None),
-            Field::ChangedClock => clock("changed_clock", "f-changed", "Changed at"),
-            Field::TidalVolume => {
-                plain("tidal_volume", "f-vt", Q::TidalVolumeMl, Some("Tidal volume, set"))
-            }
+            Field::DrawnClock => clock("drawn_clock", ids!("f-drawn"), "Drawn at"),
+            Field::Ph => FieldSpec { keys: KeyStyle::Ph, ..plain("ph", ids!("f-ph"), Q::Ph, None) },
+            Field::Pco2 => plain("pco2", ids!("f-pco2"), Q::Paco2Mmhg, None),
+            Field::Po2 => plain("po2", ids!("f-po2"), Q::Po2Mmhg, None),
+            Field::Hco3 => plain("hco3", ids!("f-hco3"), Q::Hco3MmolL, Some("HCO₃ printed")),
+            Field::Hb => plain("hb", ids!("f-hb"), Q::HbGDl, None),
+            Field::ChangedClock => clock("changed_clock", ids!("f-changed"), "Changed at"),
+            Field::TidalVolume => plain("tidal_volume", ids!("f-vt"), Q::TidalVolumeMl, Some("Tidal volume, set")),
             Field::ExpiredVolume => {
-                plain("expired_volume", "f-vte", Q::TidalVolumeMl, Some("Tidal volume, expired, read off"))
+                plain("expired_volume", ids!("f-vte"), Q::TidalVolumeMl, Some("Tidal volume, expired, read off"))
             }
-            Field::Rate => plain("rate", "f-rate", Q::RatePerMin, Some("Rate, set")),
+            Field::Rate => plain("rate", ids!("f-rate"), Q::RatePerMin, Some("Rate, set")),
             Field::TotalRate => {
-                plain("total_rate", "f-total", Q::RatePerMin, Some("Rate in all, own breaths counted"))
+                plain("total_rate", ids!("f-total"), Q::RatePerMin, Some("Rate in all, own breaths counted"))
             }
-            Field::Peep => plain("peep", "f-peep", Q::PeepCmh2o, None),
-            Field::Plateau => plain("plateau", "f-plateau", Q::PlateauCmh2o, None),
-            Field::Fio2 => plain("fio2", "f-fio2", Q::Fio2, None),
-            Field::InspiratoryTime => plain("inspiratory_time", "f-ti", Q::InspiratoryTimeS, None),
+            Field::Peep => plain("peep", ids!("f-peep"), Q::PeepCmh2o, None),
+            Field::Plateau => plain("plateau", ids!("f-plateau"), Q::PlateauCmh2o, None),
+            Field::Fio2 => plain("fio2", ids!("f-fio2"), Q::Fio2, None),
+            Field::InspiratoryTime => plain("inspiratory_time", ids!("f-ti"), Q::InspiratoryTimeS, None),
             Field::MinuteVolume => {
-                plain("minute_volume", "f-mv", Q::MinuteVolumeLMin, Some("Minute volume, expired, read off"))
+                plain("minute_volume", ids!("f-mv"), Q::MinuteVolumeLMin, Some("Minute volume, expired, read off"))
             }
-            Field::InspiratoryPressure => {
-                plain("inspiratory_pressure", "f-pinsp", Q::InspiratoryPressureCmh2o, Some("Pressure above PEEP"))
-            }
+            Field::InspiratoryPressure => plain(
+                "inspiratory_pressure",
+                ids!("f-pinsp"),
+                Q::InspiratoryPressureCmh2o,
+                Some("Pressure above PEEP"),
+            ),
+            Field::ApparatusDeadSpace => plain(
+                "apparatus_dead_space",
+                ids!("f-apparatus"),
+                Q::ApparatusDeadSpaceMl,
+                Some("Exchanger and mount, volume"),
+            ),
             Field::Label => FieldSpec {
                 name: "label",
                 id: "f-label",
+                fault_id: "f-label-fault",
                 quantity: None,
                 label: Some("Label"),
                 keys: KeyStyle::Plain,
             },
-            Field::Age => plain("age", "f-age", Q::AgeYears, None),
-            Field::Height => plain("height", "f-height", Q::HeightCm, None),
-            Field::Weight => plain("weight", "f-weight", Q::WeightKg, None),
-            Field::NewRate => plain("new_rate", "f-new-rate", Q::RatePerMin, None),
-            Field::NewVolume => plain("new_volume", "f-new-volume", Q::TidalVolumeMl, None),
+            Field::Age => plain("age", ids!("f-age"), Q::AgeYears, None),
+            Field::Height => plain("height", ids!("f-height"), Q::HeightCm, None),
+            Field::Weight => plain("weight", ids!("f-weight"), Q::WeightKg, None),
+            Field::NewRate => plain("new_rate", ids!("f-new-rate"), Q::RatePerMin, None),
+            Field::NewVolume => plain("new_volume", ids!("f-new-volume"), Q::TidalVolumeMl, None),
         }
     }
 

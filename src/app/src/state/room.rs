@@ -21,15 +21,8 @@ pub enum Room {
 
 impl Room {
     /// Every room.
-    pub const ALL: [Room; 7] = [
-        Room::Start,
-        Room::Gas,
-        Room::Settings,
-        Room::Now,
-        Room::Change,
-        Room::Record,
-        Room::Person,
-    ];
+    pub const ALL: [Room; 7] =
+        [Room::Start, Room::Gas, Room::Settings, Room::Now, Room::Change, Room::Record, Room::Person];
 
     /// Its address.
     pub const fn hash(self) -> &'static str {

@@ -57,7 +57,7 @@ pub const GAS_FIELDS: [Field; 6] =
 /// The chips that a gas is typed in.
 pub const GAS_CHOICES: [Choice; 2] = [Choice::Site, Choice::Drawn];
 /// The fields that settings are typed in.
-pub const SETTINGS_FIELDS: [Field; 11] = [
+pub const SETTINGS_FIELDS: [Field; 12] = [
     Field::ChangedClock,
     Field::TidalVolume,
     Field::ExpiredVolume,
@@ -69,6 +69,7 @@ pub const SETTINGS_FIELDS: [Field; 11] = [
     Field::InspiratoryTime,
     Field::MinuteVolume,
     Field::InspiratoryPressure,
+    Field::ApparatusDeadSpace,
 ];
 /// The chips that settings are typed in.
 pub const SETTINGS_CHOICES: [Choice; 4] =
@@ -116,8 +117,7 @@ pub fn settings_rows(sheet: &Sheet, in_force: &Settings) -> Vec<Row> {
             if typed_way {
                 rows.push(Row::Note(words::TUBE_PASSIVE));
             }
-            let volume =
-                if way == Breathes::VolumeSet { Field::TidalVolume } else { Field::ExpiredVolume };
+            let volume = if way == Breathes::VolumeSet { Field::TidalVolume } else { Field::ExpiredVolume };
             rows.extend([Row::Number(volume, needed), Row::Number(Field::Rate, needed)]);
         }
         Breathes::OwnToo => {
@@ -160,6 +160,7 @@ fn optional_rows(way: Breathes) -> Vec<Row> {
         number(Field::Fio2),
         number(Field::InspiratoryTime),
         number(Field::MinuteVolume),
+        number(Field::ApparatusDeadSpace),
         Row::Chips(Choice::Leak, false),
     ]);
     rows
@@ -177,7 +178,8 @@ pub const PERSON_ROWS: [Row; 6] = [
 
 /// What is wrong or missing, in the order of the rows.
 pub fn faults(sheet: &Sheet, rows: &[Row], group: AgeGroup) -> Vec<(Place, String)> {
-    rows.iter().filter_map(|row| fault(sheet, *row, group).map(|words| (row.place(), words)))
+    rows.iter()
+        .filter_map(|row| fault(sheet, *row, group).map(|words| (row.place(), words)))
         .filter_map(|(place, words)| Some((place?, words)))
         .collect()
 }

@@ -7,6 +7,7 @@ use units::AgeGroup;
 
 use super::choice::{self, Breathes, Choice};
 use super::field::Field;
+use super::room::Room;
 use super::rows;
 use super::sheet::Sheet;
 
@@ -30,13 +31,17 @@ pub fn gas(sheet: &Sheet, group: AgeGroup, settings_held_min: Option<f64>) -> Op
 /// The settings as typed: only what differs from those in force.
 pub fn settings(sheet: &Sheet, in_force: &Settings, group: AgeGroup) -> Settings {
     let value = |field| sheet.read(field, group).value();
-    let mut typed = sheet.pick(Choice::Breathes).and_then(choice::breathes).map_or_else(
-        Settings::default,
-        |way| way_settings(way, sheet.pick(Choice::OwnControl).and_then(choice::own_control)),
-    );
+    let mut typed =
+        sheet.pick(Choice::Breathes).and_then(choice::breathes).map_or_else(Settings::default, |way| {
+            way_settings(way, sheet.pick(Choice::OwnControl).and_then(choice::own_control))
+        });
     let asked = rows::settings_rows(sheet, in_force);
     let shown = |field: Field| {
-        asked.iter().any(|row| row.place() == Some(rows::Place::Number(field))).then(|| value(field)).flatten()
+        asked
+            .iter()
+            .any(|row| row.place() == Some(rows::Place::Number(field)))
+            .then(|| value(field))
+            .flatten()
     };
     typed.tidal_volume_ml = shown(Field::TidalVolume);
     typed.tidal_volume_expired_ml = shown(Field::ExpiredVolume);
@@ -48,6 +53,7 @@ pub fn settings(sheet: &Sheet, in_force: &Settings, group: AgeGroup) -> Settings
     typed.inspiratory_time_s = shown(Field::InspiratoryTime);
     typed.minute_volume_l_min = shown(Field::MinuteVolume);
     typed.inspiratory_pressure_cmh2o = shown(Field::InspiratoryPressure);
+    typed.apparatus_dead_space_ml = shown(Field::ApparatusDeadSpace);
     if let Some(leak) = sheet.pick(Choice::Leak).and_then(choice::leak) {
         typed.leak = Some(leak);
     }
@@ -95,7 +101,10 @@ fn only_new(in_force: &Settings, typed: Settings) -> Settings {
         leak: new(in_force.leak, typed.leak),
         rate_per_min: new(in_force.rate_per_min, typed.rate_per_min),
         tidal_volume_ml: new(in_force.tidal_volume_ml, typed.tidal_volume_ml),
-        inspiratory_pressure_cmh2o: new(in_force.inspiratory_pressure_cmh2o, typed.inspiratory_pressure_cmh2o),
+        inspiratory_pressure_cmh2o: new(
+            in_force.inspiratory_pressure_cmh2o,
+            typed.inspiratory_pressure_cmh2o,
+        ),
         peep_cmh2o: new(in_force.peep_cmh2o, typed.peep_cmh2o),
         inspiratory_time_s: new(in_force.inspiratory_time_s, typed.inspiratory_time_s),
         fio2: new(in_force.fio2, typed.fio2),
@@ -115,6 +124,27 @@ pub fn change(sheet: &Sheet, in_force: &Settings, group: AgeGroup) -> Settings {
     }
 }
 
+/// Puts the settings of an address ("rate=22&vt=340") into the steppers; what it does not know is left out.
+pub fn try_settings(sheet: &mut Sheet, tried: &str) {
+    sheet.set_text(Field::NewRate, "");
+    sheet.set_text(Field::NewVolume, "");
+    for (name, value) in tried.split('&').filter_map(|part| part.split_once('=')) {
+        match name {
+            "rate" => sheet.set_text(Field::NewRate, value),
+            "vt" => sheet.set_text(Field::NewVolume, value),
+            _ => {}
+        }
+    }
+}
+
+/// The address at which `change` is tried.
+pub fn address_of(change: &Settings) -> String {
+    let part = |name: &str, value: Option<f64>| value.map(|value| format!("{name}={value}"));
+    let parts: Vec<String> =
+        [part("rate", change.rate_per_min), part("vt", change.tidal_volume_ml)].into_iter().flatten().collect();
+    format!("{}?{}", Room::Change.hash(), parts.join("&"))
+}
+
 /// The person as typed.
 pub fn person(sheet: &Sheet) -> Person {
     let value = |field| sheet.read(field, AgeGroup::Adult).value();
@@ -124,6 +154,46 @@ pub fn person(sheet: &Sheet) -> Person {
         height_cm: value(Field::Height),
         height_how: sheet.pick(Choice::HeightHow).and_then(choice::height_how),
         weight_kg: value(Field::Weight),
+    }
+}
+
+/// Puts what is known of the case into the sheet's fields, unless somebody has begun to change them.
+pub fn offer_person(sheet: &mut Sheet, case: &case::Case) {
+    if !sheet.text(Field::Label).is_empty() {
+        return;
+    }
+    let person = &case.person;
+    sheet.set_text(Field::Label, case.label.as_str());
+    let numbers =
+        [(Field::Age, person.age_years), (Field::Height, person.height_cm), (Field::Weight, person.weight_kg)];
+    for (field, value) in numbers {
+        sheet.set_text(field, value.map(|value| format!("{value}")).unwrap_or_default());
+    }
+    for pick in 0..3 {
+        if person.sex.is_some() && choice::sex(pick) == person.sex {
+            sheet.restore_pick(Choice::Sex, pick);
+        }
+        if person.height_how.is_some() && choice::height_how(pick) == person.height_how {
+            sheet.restore_pick(Choice::HeightHow, pick);
+        }
+    }
+}
+
+/// The value in force that a field would change.
+pub const fn value_in_force(settings: &Settings, field: Field) -> Option<f64> {
+    match field {
+        Field::TidalVolume => settings.tidal_volume_ml,
+        Field::ExpiredVolume => settings.tidal_volume_expired_ml,
+        Field::Rate => settings.rate_per_min,
+        Field::TotalRate => settings.rate_total_per_min,
+        Field::Peep => settings.peep_cmh2o,
+        Field::Plateau => settings.plateau_cmh2o,
+        Field::Fio2 => settings.fio2,
+        Field::InspiratoryTime => settings.inspiratory_time_s,
+        Field::MinuteVolume => settings.minute_volume_l_min,
+        Field::InspiratoryPressure => settings.inspiratory_pressure_cmh2o,
+        Field::ApparatusDeadSpace => settings.apparatus_dead_space_ml,
+        _ => None,
     }
 }
 
@@ -201,12 +271,9 @@ mod tests {
         sheet.choose(Choice::Site, Some(0), &now());
         sheet.choose(Choice::Drawn, Some(2), &now());
         sheet.choose(Choice::Breathes, Some(0), &now());
-        for (field, text) in [
-            (Field::Ph, "7,21"),
-            (Field::Pco2, "71"),
-            (Field::TidalVolume, "340"),
-            (Field::Rate, "18"),
-        ] {
+        for (field, text) in
+            [(Field::Ph, "7,21"), (Field::Pco2, "71"), (Field::TidalVolume, "340"), (Field::Rate, "18")]
+        {
             sheet.set_text(field, text);
         }
         sheet
@@ -283,6 +350,28 @@ mod tests {
         assert!(!held_is_open(&case));
         assert_eq!(case.gases()[0].2.settings_held_min, None);
         assert_eq!(case.settings_steps()[0].0, drawn);
+    }
+
+    #[test]
+    fn a_person_known_is_offered_and_comes_back_the_same() {
+        let mut case = Case::new("Bed 3");
+        case.person = crate::state::demo::PERSON;
+        let mut sheet = Sheet::default();
+        offer_person(&mut sheet, &case);
+        assert_eq!(person(&sheet), case.person);
+        sheet.set_text(Field::Height, "170");
+        offer_person(&mut sheet, &case);
+        assert_eq!(sheet.text(Field::Height), "170", "what was begun stays");
+    }
+
+    #[test]
+    fn an_address_sets_the_steppers() {
+        let change = Settings { rate_per_min: Some(22.0), ..Settings::default() };
+        assert_eq!(address_of(&change), "#/change?rate=22");
+        let mut sheet = Sheet::default();
+        sheet.set_text(Field::NewVolume, "400");
+        try_settings(&mut sheet, "rate=22&x=1&=&vt");
+        assert_eq!((sheet.text(Field::NewRate), sheet.text(Field::NewVolume)), ("22", ""));
     }
 
     #[test]

@@ -57,10 +57,8 @@ pub fn compared(settings: &Settings, change: &Settings) -> String {
 pub const PRICE: [&str; 4] = ["rate", "volume", "plateau", "minute volume"];
 /// Units under the prices.
 pub const PRICE_UNITS: [&str; 4] = ["/min", "mL/kg", "cmH₂O", "L/min"];
-/// No plateau was typed.
-pub const NO_PLATEAU: &str = "not typed";
-/// No height.
-pub const NO_PER_KG: &str = "no height";
+/// What stands there while a price isn't known.
+pub const PRICE_MISSING: [&str; 4] = ["", "height not known", "not typed", ""];
 
 /// The answer in one sentence, said 700 ms after the last step.
 pub fn said(change: &Settings, forecast: &Forecast) -> String {
@@ -104,8 +102,7 @@ mod tests {
 
     #[test]
     fn the_compared_curve_is_named_by_what_it_keeps() {
-        let old =
-            Settings { rate_per_min: Some(18.0), tidal_volume_ml: Some(340.0), ..Settings::default() };
+        let old = Settings { rate_per_min: Some(18.0), tidal_volume_ml: Some(340.0), ..Settings::default() };
         let rate = Settings { rate_per_min: Some(26.0), ..Settings::default() };
         assert_eq!(compared(&old, &rate), "if 18");
         let both = Settings { tidal_volume_ml: Some(360.0), ..rate };

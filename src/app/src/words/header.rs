@@ -1,8 +1,10 @@
-//! Words of the header.
+//! Words of the header and the bar.
 
 /// Goes back; what was typed stays.
 pub const BACK: &str = "Back";
-/// The case, spoken.
+/// The bar, spoken.
+pub const ROOMS: &str = "Rooms";
+/// The case, spoken: its label first, so that it can be called by what is seen.
 pub fn case(label: &str) -> String {
-    format!("Case sheet of {label}")
+    format!("{label}, case sheet")
 }

@@ -40,7 +40,8 @@ pub const NARROW: &str = "Narrow it";
 /// Heads what is assumed and can't be narrowed.
 pub const ASSUMED: &str = "What it assumes";
 /// What the band leaves out.
-pub const BAND_MEANS: &str = "The band is the patient's, from simulated bodies. It can't allow for a body that the model has wrong.";
+pub const BAND_MEANS: &str =
+    "The band is the patient's, from simulated bodies. It can't allow for a body that the model has wrong.";
 /// Asks how long the settings were held.
 pub const HELD: &str = "Before the first gas the settings had been";
 /// The chips of it.
@@ -68,6 +69,8 @@ pub fn heading(now_p50: f64, forecast: &Forecast) -> String {
     )
 }
 
+/// Within so many minutes it counts as settled: nobody draws a gas in less.
+pub const SOON_MIN: f64 = 5.0;
 /// Minutes beyond which a time is not worth naming.
 const FAR_MIN: f64 = 240.0;
 
@@ -76,7 +79,7 @@ pub fn when_settled(within: &Quantiles, now: &Now) -> String {
     let at = |minutes: f64| clock(now.wall.plus_minutes(minutes), now);
     let known = |minutes: f64| minutes.is_finite() && minutes <= FAR_MIN;
     match (within.p10, within.p90) {
-        (_, late) if late < 1.0 => "It is within 2 mmHg of settled.".to_owned(),
+        (_, late) if late < SOON_MIN => "It is within 2 mmHg of settled.".to_owned(),
         (early, late) if early < 1.0 && known(late) => {
             format!("Within 2 mmHg of settled by {}, perhaps now.", at(late))
         }
@@ -180,14 +183,15 @@ pub fn ratio(factor: f64, paco2: &Quantiles) -> String {
 
 /// One thing assumed.
 pub fn assumed(item: &bedside::Assumed) -> String {
-    let decimals = if item.value.abs() < 3.0 { 2 } else { usize::from(item.value.abs() < 20.0) };
+    let size = if item.spread > 0.0 { item.spread } else { item.value / 10.0 };
+    let decimals = if size < 0.3 { 2 } else { usize::from(size < 3.0) };
     let unit = if item.unit.is_empty() { String::new() } else { format!(" {}", item.unit) };
-    format!(
-        "{}: {} ± {}{unit} assumed",
-        item.name,
-        number(item.value, decimals),
-        number(item.spread, decimals)
-    )
+    let spread = if item.spread > 0.0 {
+        format!(" ± {}", number(item.spread, decimals))
+    } else {
+        String::new()
+    };
+    format!("{}: {}{spread}{unit} assumed", item.name, number(item.value, decimals))
 }
 
 /// An offer's first column.
@@ -286,6 +290,21 @@ mod tests {
         assert_eq!(said(0.0, 17.0), "Within 2 mmHg of settled by 21:35, perhaps now.");
         assert!(said(37.0, f64::INFINITY).contains("21:55 at the earliest"));
         assert!(said(f64::NAN, f64::NAN).contains("more than 4 hours"));
+    }
+
+    #[test]
+    fn an_assumption_has_no_more_decimals_than_its_spread() {
+        let item = |value, spread, unit| bedside::Assumed {
+            name: "It",
+            value,
+            spread,
+            unit,
+            source: "",
+            narrows: "",
+        };
+        assert_eq!(assumed(&item(0.0, 10.0, "%")), "It: 0 ± 10 % assumed");
+        assert_eq!(assumed(&item(0.25, 0.12, "")), "It: 0.25 ± 0.12 assumed");
+        assert_eq!(assumed(&item(0.95, 0.0, "")), "It: 0.95 assumed");
     }
 
     #[test]

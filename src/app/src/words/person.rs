@@ -4,12 +4,25 @@
 pub const TITLE: &str = "Case";
 /// What a label is.
 pub const LABEL_HINT: &str = "A bed or a number of your own. No name, nothing that tells who it is.";
+/// The label's label.
+pub const LABEL: &str = "Label";
+/// What is wrong with a label.
+pub fn label_fault(text: &str) -> Option<String> {
+    let letters = text.trim().chars().count();
+    if letters == 0 {
+        Some(LABEL_NEEDED.to_owned())
+    } else if letters > LABEL_MOST {
+        Some(LABEL_LONG.to_owned())
+    } else {
+        None
+    }
+}
 /// No label.
-pub const LABEL_NEEDED: &str = "Type a label: the buttons that write name the case by it.";
+const LABEL_NEEDED: &str = "Type a label: the buttons that write name the case by it.";
 /// The label is too long.
-pub const LABEL_LONG: &str = "At most 24 letters, so that it fits on the buttons.";
+const LABEL_LONG: &str = "At most 24 letters, so that it fits on the buttons.";
 /// Most letters of a label.
-pub const LABEL_MOST: usize = 24;
+const LABEL_MOST: usize = 24;
 /// Writes the sheet.
 pub fn save(label: &str) -> String {
     format!("{label}: SAVE")

@@ -1,7 +1,7 @@
 //! Words of the Record: every kind of entry as a sentence.
 
 use case::{
-    AirwayState, Airway, Case, Circulation, Condition, Control, Effort, Entry, EntryId, EntryKind, Gas,
+    Airway, AirwayState, Case, Circulation, Condition, Control, Effort, Entry, EntryId, EntryKind, Gas,
     GasChoice, Leak, Measured, Moment, Now, SedationLevel, Settings, Trace,
 };
 
@@ -32,10 +32,8 @@ pub fn not_understood(fields: &[String]) -> String {
 }
 /// A file's name from the label and the moment: letters, digits and lines only.
 pub fn file_name(label: &str, now: &Now) -> String {
-    let plain: String = label
-        .chars()
-        .map(|c| if c.is_ascii_alphanumeric() { c.to_ascii_lowercase() } else { '-' })
-        .collect();
+    let plain: String =
+        label.chars().map(|c| if c.is_ascii_alphanumeric() { c.to_ascii_lowercase() } else { '-' }).collect();
     let parts: Vec<&str> = plain.split('-').filter(|part| !part.is_empty()).collect();
     let name = if parts.is_empty() { "case".to_owned() } else { parts.join("-") };
     format!("{name}-{}.json", clock(now.wall, now).replace(':', ""))
@@ -111,10 +109,9 @@ fn kind(kind: &EntryKind, case: &Case, now: &Now) -> String {
         ),
         EntryKind::Checked(words) => format!("Checked: {}", list(words)),
         EntryKind::Note(words) => words.clone(),
-        EntryKind::NotUnderstood(unknown) => format!(
-            "“{}”: an entry this version does not understand. It is kept and not used",
-            unknown.kind
-        ),
+        EntryKind::NotUnderstood(unknown) => {
+            format!("“{}”: an entry this version does not understand. It is kept and not used", unknown.kind)
+        }
     }
 }
 
@@ -127,12 +124,13 @@ fn kind_of_correction(corrected: &EntryKind, case: &Case, now: &Now) -> String {
 
 /// When an entry was, by its id.
 fn when(case: &Case, id: &EntryId, now: &Now) -> String {
-    let at: Option<Moment> = case.resolved().iter().find(|e| e.id == *id).map(|e| e.at);
+    let at: Option<Moment> = case.entries().iter().find(|e| e.id == *id).map(|e| e.at);
     at.map_or_else(|| "a time not known".to_owned(), |at| clock(at, now))
 }
 
 fn gas(gas: &Gas) -> String {
-    let mut parts = vec![format!("pH {}", as_typed(gas.ph)), format!("PCO₂ {} mmHg", as_typed(rounded(gas.pco2_mmhg)))];
+    let mut parts =
+        vec![format!("pH {}", as_typed(gas.ph)), format!("PCO₂ {} mmHg", as_typed(rounded(gas.pco2_mmhg)))];
     let optional = [
         ("PO₂", gas.po2_mmhg.map(rounded), " mmHg"),
         ("HCO₃", gas.hco3_printed_mmol_l, " mmol/L"),

@@ -67,5 +67,4 @@ pub fn unsaved(count: usize) -> String {
     format!("{entries} not stored on this device: only on this screen. Export the case now.")
 }
 /// No names for entries.
-pub const NO_IDS: &str =
-    "Nothing was written: this browser gives no random numbers, which entries are named by. Use another browser.";
+pub const NO_IDS: &str = "Nothing was written: this browser gives no random numbers, which entries are named by. Use another browser.";

@@ -1,95 +1,84 @@
 //! The answer: the two numbers with their bands, one sentence, and what it depends on.
 
 use bedside::Freshness;
+use case::{Gas, Moment};
 use leptos::prelude::*;
 
-use super::{View, last_gas, words, write_unchanged};
-use crate::parts::cautions::{Conditions, Sentences};
-use crate::parts::figure::Figure;
-use crate::state::app::{App, app};
+use super::{last_gas, words, write_unchanged};
+use crate::parts::buttons::press;
+use crate::parts::cautions;
+use crate::parts::figure::figure;
+use crate::parts::html::{element, said};
+use crate::state::app::App;
 use crate::state::outlook;
+use crate::state::present::Present;
 use crate::words::values::{about, in_words, paco2_range, ph_range};
 
 /// The answer, or why there is none.
-#[component]
-pub fn AnswerView(view: Memo<Option<View>>) -> impl IntoView {
-    let app = app();
-    let numbers = move || {
-        view.with(|view| match view {
-            None => view! { <p class="lead">{words::NO_CASE}</p> }.into_any(),
-            Some(view) => one(app, view),
-        })
+pub fn answer(app: App) -> AnyView {
+    let drawn = move || {
+        let gas = last_gas(app);
+        app.present.with(|present| html(present.as_ref(), gas))
     };
-    let cautions = Signal::derive(move || {
-        view.with(|view| view.as_ref().map(|view| view.cautions.clone()).unwrap_or_default())
-    });
-    let standing =
-        Signal::derive(move || view.with(|view| view.as_ref().map(|view| view.answer.standing.clone())));
+    let expired = move || {
+        app.present.with(|p| matches!(p.as_ref().map(|p| p.freshness), Some(Freshness::Expired { .. })))
+    };
+    let label = move || words::nothing_changed(&app.label().unwrap_or_default());
     view! {
         <section class="answer">
-            {numbers}
-            <Conditions standing />
-            <Sentences cautions />
+            <div inner_html=move || drawn()></div>
+            <button
+                type="button"
+                class="plain"
+                hidden=move || !expired()
+                on:click=press(move || write_unchanged(app))
+            >
+                {move || label()} " "
+                <span class="faint">{move || app.still().unwrap_or_default()}</span>
+            </button>
         </section>
     }
+    .into_any()
 }
 
-fn one(app: App, view: &View) -> AnyView {
-    if let Freshness::Expired { since } = view.freshness {
-        return expired(app, view, since);
+fn html(present: Option<&Present>, gas: Option<(Gas, Moment)>) -> String {
+    let Some(present) = present else { return said("p", "lead", words::NO_CASE) };
+    let now = &present.now;
+    if let Freshness::Expired { since } = present.freshness {
+        return said("p", "lead", &words::expired(gas.as_ref().map(|(gas, at)| (gas, *at)), since, now))
+            + &cautions::cautions(&present.cautions);
     }
-    let Some((forecast, (paco2, ph))) = view.shown().and_then(|f| Some((f, outlook::at(f, 0.0)?))) else {
-        return without_forecast(app, view);
-    };
-    let still = if let Freshness::StillSo { since } = view.freshness {
-        Some(view! { <p class="still-so">{words::still_so(since, &view.now)}</p> })
+    let numbers = numbers(present);
+    let answer = if numbers.is_empty() {
+        let gas = gas.map(|(gas, at)| said("p", "lead", &words::last_gas(&gas, at, now)));
+        let ratio = present.ratio.map(|ratio| {
+            said("p", "sentence", &words::ratio(ratio.minute_volume_factor, &ratio.paco2_mmhg))
+        });
+        gas.unwrap_or_default() + &ratio.unwrap_or_default()
     } else {
-        None
+        numbers
     };
-    view! {
-        <div class="figures">
-            <Figure
-                label=words::PACO2_NOW
-                value=about(paco2.p50, 0)
-                unit=words::MMHG
-                band=in_words(&paco2_range(&paco2))
-            />
-            <Figure label=words::PH_NOW value=about(ph.p50, 2) unit="" band=ph_range(&ph) />
-        </div>
-        <p class="hint">{words::CALCULATED}</p>
-        <p class="sentence">
-            {words::heading(paco2.p50, forecast)} " "
-            {words::when_settled(&forecast.minutes_to_within_2_mmhg, &view.now)}
-        </p>
-        {still}
-    }
-    .into_any()
+    answer + &cautions::standing(&present.answer.standing) + &cautions::cautions(&present.cautions)
 }
 
-/// An hour unconfirmed: the number is taken away.
-fn expired(app: App, view: &View, since: case::Moment) -> AnyView {
-    let gas = last_gas(&app.case());
-    let said = words::expired(gas.as_ref().map(|(gas, at)| (gas, *at)), since, &view.now);
-    let label = app.label().unwrap_or_default();
-    view! {
-        <p class="lead">{said}</p>
-        <div class="ways">
-            <button type="button" class="plain" on:click=move |_| write_unchanged(app)>
-                {words::nothing_changed(&label)} " "
-                <span class="faint">{move || app.still()}</span>
-            </button>
-        </div>
-    }
-    .into_any()
-}
-
-fn without_forecast(app: App, view: &View) -> AnyView {
-    let gas = last_gas(&app.case()).map(|(gas, at)| words::last_gas(&gas, at, &view.now));
-    let ratio = app.study.with_untracked(|study| study.as_ref()?.ratio(&view.now));
-    let ratio = ratio.map(|ratio| words::ratio(ratio.minute_volume_factor, &ratio.paco2_mmhg));
-    view! {
-        {gas.map(|said| view! { <p class="lead">{said}</p> })}
-        {ratio.map(|said| view! { <p class="sentence">{said}</p> })}
-    }
-    .into_any()
+/// The two numbers and the sentence; empty where there is no forecast.
+fn numbers(present: &Present) -> String {
+    let Some(forecast) = present.shown() else { return String::new() };
+    let Some((paco2, ph)) = outlook::at(forecast, 0.0) else { return String::new() };
+    let now = &present.now;
+    let figures = figure(words::PACO2_NOW, &about(paco2.p50, 0), words::MMHG, &in_words(&paco2_range(&paco2)))
+        + &figure(words::PH_NOW, &about(ph.p50, 2), "", &ph_range(&ph));
+    let sentence = format!(
+        "{} {}",
+        words::heading(paco2.p50, forecast),
+        words::when_settled(&forecast.minutes_to_within_2_mmhg, now)
+    );
+    let still = match present.freshness {
+        Freshness::StillSo { since } => said("p", "still-so", &words::still_so(since, now)),
+        _ => String::new(),
+    };
+    element("div", "figures", &figures)
+        + &said("p", "hint", words::CALCULATED)
+        + &said("p", "sentence", &sentence)
+        + &still
 }

@@ -3,57 +3,60 @@
 use bedside::Assumed;
 use leptos::prelude::*;
 
-use super::{View, words};
+use super::words;
+use crate::parts::buttons::link;
+use crate::parts::html::{element, said, tag, text};
+use crate::state::app::App;
 use crate::state::room::Room;
 
-/// Where an assumption is replaced, by what it is called.
-fn room_for(narrows: &str) -> Room {
-    let words = narrows.to_lowercase();
-    let has = |names: &[&str]| names.iter().any(|name| words.contains(name));
+/// Where an assumption is replaced, by what it says; `None` where this version has no place for it.
+fn room_for(narrows: &str) -> Option<Room> {
+    let has = |names: &[&str]| names.iter().any(|name| narrows.contains(name));
     if has(&["height", "weight", "sex", "age"]) {
-        Room::Person
-    } else if has(&["haemoglobin", "gas", "sample"]) {
-        Room::Gas
+        Some(Room::Person)
+    } else if has(&["exchanger", "plateau", "PEEP", "FiO", "minute volume", "expired"]) {
+        Some(Room::Settings)
     } else {
-        Room::Settings
+        None
     }
 }
 
 /// The list, and under it what is assumed and nothing at the bedside narrows.
-#[component]
-pub fn Narrow(view: Memo<Option<View>>) -> impl IntoView {
-    let assumed = Memo::new(move |_| {
-        view.with(|view| {
-            let view = view.as_ref().filter(|view| view.shown().is_some());
-            view.map(|view| view.answer.assumed.clone()).unwrap_or_default()
-        })
-    });
+pub fn narrow(app: App) -> AnyView {
     let list = move |narrows: bool| {
-        assumed.with(|assumed| {
-            let those = assumed.iter().filter(|item| item.narrows.is_empty() != narrows);
-            those.map(|item| one(item)).collect_view()
+        app.present.with(|present| {
+            let shown = present.as_ref().filter(|present| present.shown().is_some());
+            shown.map(|present| html(&present.answer.assumed, narrows)).unwrap_or_default()
         })
     };
-    let any = move |narrows: bool| assumed.with(|all| all.iter().any(|a| a.narrows.is_empty() != narrows));
+    let (narrowing, rest) = (Memo::new(move |_| list(true)), Memo::new(move |_| list(false)));
     view! {
-        <section class="narrow" hidden=move || !any(true)>
+        <section class="narrow" hidden=move || narrowing.with(String::is_empty)>
             <h2>{words::NARROW}</h2>
-            <ul class="plain-list">{move || list(true)}</ul>
-            <a class="plain" href=Room::Settings.hash()>{words::SETTINGS_CHANGED}</a>
+            <ul class="plain-list" inner_html=move || narrowing.get()></ul>
+            {link(words::SETTINGS_CHANGED.to_owned(), Room::Settings.hash())}
         </section>
-        <details class="assumed" hidden=move || !any(false)>
+        <details class="assumed" hidden=move || rest.with(String::is_empty)>
             <summary>{words::ASSUMED}</summary>
-            <ul class="plain-list">{move || list(false)}</ul>
+            <ul class="plain-list" inner_html=move || rest.get()></ul>
         </details>
     }
+    .into_any()
 }
 
-fn one(item: &Assumed) -> impl IntoView + use<> {
-    let said = words::assumed(item);
-    let link = (!item.narrows.is_empty()).then(|| {
-        view! { <a class="narrow-link" href=room_for(item.narrows).hash()>{item.narrows}</a> }
-    });
-    view! { <li>{link} " " <span class="faint">{said}</span></li> }
+fn html(assumed: &[Assumed], narrows: bool) -> String {
+    let mut rows = String::new();
+    for item in assumed.iter().filter(|item| item.narrows.is_empty() != narrows) {
+        let how = match room_for(item.narrows) {
+            _ if item.narrows.is_empty() => String::new(),
+            Some(room) => {
+                tag("a", &[("class", "narrow-link"), ("href", room.hash())], &text(item.narrows)) + " "
+            }
+            None => said("span", "narrow-words", item.narrows) + " ",
+        };
+        rows += &element("li", "", &(how + &said("span", "faint", &words::assumed(item))));
+    }
+    rows
 }
 
 #[cfg(test)]
@@ -62,9 +65,9 @@ mod tests {
 
     #[test]
     fn each_assumption_leads_to_where_it_is_typed() {
-        assert_eq!(room_for("Type the height."), Room::Person);
-        assert_eq!(room_for("Type sex and age."), Room::Person);
-        assert_eq!(room_for("Type the haemoglobin."), Room::Gas);
-        assert_eq!(room_for("Type the plateau."), Room::Settings);
+        assert_eq!(room_for("Type height and weight."), Some(Room::Person));
+        assert_eq!(room_for("Give the sex."), Some(Room::Person));
+        assert_eq!(room_for("Type the volume of exchanger and mount."), Some(Room::Settings));
+        assert_eq!(room_for("Draw a gas after the change."), None);
     }
 }

@@ -1,82 +1,99 @@
-//! Settings offered, each with where it leads and what it costs; none is chosen.
+//! Settings offered, each with where it leads and what it costs; none is chosen. Each is a link to trying it.
 
-use bedside::Offer;
+use bedside::{Caution, Offer, Offers};
 use leptos::prelude::*;
 
-use super::{View, words};
-use crate::device::page;
-use crate::parts::cautions::Sentences;
-use crate::state::app::{App, app};
-use crate::state::field::Field;
-use crate::state::room::Room;
+use super::words;
+use crate::parts::cautions::cautions;
+use crate::parts::html::{element, said};
+use crate::state::app::App;
+use crate::state::writing::address_of;
 use crate::words::spoken::spoken;
-use crate::words::values::{about, as_typed, paco2_range, ph_range};
+use crate::words::values::{about, paco2_range, ph_range};
+
+/// At most so many are offered.
+const MOST: usize = 3;
 
 /// The offers, while the forecast is shown.
-#[component]
-pub fn Offers(view: Memo<Option<View>>) -> impl IntoView {
-    let app = app();
+pub fn offers(app: App) -> AnyView {
     let offers = Memo::new(move |_| {
-        view.with(|view| {
-            let view = view.as_ref().filter(|view| view.shown().is_some())?;
-            app.study.with(|study| study.as_ref()?.offers(&view.now).value)
-        })
+        app.study.with(|study| app.present.with(|present| present.as_ref()?.offers(study.as_ref()?)))
     });
-    let rows = move || offers.with(|offers| offers.as_ref().map(|all| list(app, &all.offers)));
-    let cautions = Signal::derive(move || {
-        offers.with(|offers| offers.as_ref().map(|all| all.fewer_because.clone()).unwrap_or_default())
-    });
+    let one = move |place: usize| offers.with(|all| all.as_ref().and_then(|all| all.offers.get(place).cloned()));
+    let count = move || offers.with(|all| all.as_ref().map_or(0, |all| all.offers.len()));
+    let fewer = move || offers.with(|all| all.as_ref().map(because).unwrap_or_default());
+    let own = move |offer: &Offer| {
+        let shared = offers.with(|all| all.as_ref().map(shared).unwrap_or_default());
+        offer.cautions.iter().filter(|caution| !shared.contains(caution)).cloned().collect::<Vec<_>>()
+    };
+    let mut rows = vec![];
+    // Three links that stay while their words change, so that the focus on one is not lost each minute.
+    for place in 0..MOST {
+        let words = move || one(place).map(|offer| html(&offer)).unwrap_or_default();
+        let name = move || one(place).map(|offer| name(&offer)).unwrap_or_default();
+        let address = move || one(place).map(|offer| address_of(&offer.change)).unwrap_or_default();
+        let heed = move || one(place).map(|offer| cautions(&own(&offer))).unwrap_or_default();
+        rows.push(
+            view! {
+                <li hidden=move || one(place).is_none()>
+                    <a
+                        class="offer"
+                        href=move || address()
+                        aria-label=move || name()
+                        inner_html=move || words()
+                    ></a>
+                    <div inner_html=move || heed()></div>
+                </li>
+            }
+            .into_any(),
+        );
+    }
+    let heading = move || if count() == MOST { words::OFFERS } else { words::FEWER };
     view! {
-        <section class="offers" hidden=move || offers.with(Option::is_none)>
-            {rows}
-            <Sentences cautions />
+        <section class="offers">
+            <div hidden=move || count() == 0>
+                <h2>{move || heading().to_owned()}</h2>
+                <ul class="plain-list">{rows}</ul>
+                <p class="hint">{words::NONE_CHOSEN}</p>
+            </div>
+            <div inner_html=move || fewer()></div>
         </section>
     }
+    .into_any()
 }
 
-fn list(app: App, offers: &[Offer]) -> Option<impl IntoView + use<>> {
-    let heading = match offers.len() {
-        0 => return None,
-        3 => words::OFFERS,
-        _ => words::FEWER,
-    };
-    let rows = offers.iter().map(|offer| row(app, offer)).collect_view();
-    Some(view! {
-        <h2>{heading}</h2>
-        <ul class="plain-list">{rows}</ul>
-        <p class="hint">{words::NONE_CHOSEN}</p>
-    })
+/// What to heed with every one of them is said once.
+fn shared(offers: &Offers) -> Vec<Caution> {
+    let Some((first, rest)) = offers.offers.split_first() else { return vec![] };
+    let everywhere = |caution: &&Caution| rest.iter().all(|offer| offer.cautions.contains(caution));
+    first.cautions.iter().filter(everywhere).cloned().collect()
 }
 
-fn row(app: App, offer: &Offer) -> impl IntoView + use<> {
-    let change = offer.change;
+fn because(offers: &Offers) -> String {
+    cautions(&shared(offers)) + &cautions(&offers.fewer_because)
+}
+
+fn name(offer: &Offer) -> String {
     let settled = offer.forecast.settled;
-    let what = words::offer(&change);
-    let paco2 = (about(settled.paco2_mmhg.p50, 0), paco2_range(&settled.paco2_mmhg));
-    let ph = (about(settled.ph.p50, 2), ph_range(&settled.ph));
-    let price = words::price(&offer.price);
-    let name = spoken(&format!(
-        "{what}: PaCO₂ {} ({}) mmHg, pH {} ({}), {price}",
-        paco2.0, paco2.1, ph.0, ph.1
-    ));
-    let try_it = move |_| {
-        let text = |value: Option<f64>| value.map(as_typed).unwrap_or_default();
-        app.sheet.update(|sheet| {
-            sheet.set_text(Field::NewRate, text(change.rate_per_min));
-            sheet.set_text(Field::NewVolume, text(change.tidal_volume_ml));
-        });
-        page::go(Room::Change.hash());
+    spoken(&format!(
+        "{}: PaCO₂ {} ({}) mmHg, pH {} ({}), {}",
+        words::offer(&offer.change),
+        about(settled.paco2_mmhg.p50, 0),
+        paco2_range(&settled.paco2_mmhg),
+        about(settled.ph.p50, 2),
+        ph_range(&settled.ph),
+        words::price(&offer.price)
+    ))
+}
+
+fn html(offer: &Offer) -> String {
+    let settled = offer.forecast.settled;
+    let figure = |name: &str, value: &str, band: &str| {
+        let inner = said("span", "offer-name", name) + &said("b", "", value) + &said("small", "", band);
+        element("span", "offer-figure", &inner)
     };
-    let cautions = offer.cautions.clone();
-    view! {
-        <li>
-            <button type="button" class="offer" aria-label=name on:click=try_it>
-                <b class="offer-what">{what}</b>
-                <span class="offer-paco2">"PaCO₂ " <b>{paco2.0}</b> <small>{paco2.1}</small></span>
-                <span class="offer-ph">"pH " <b>{ph.0}</b> <small>{ph.1}</small></span>
-                <small class="offer-price">{price}</small>
-            </button>
-            <Sentences cautions=Signal::stored(cautions) />
-        </li>
-    }
+    said("b", "offer-what", &words::offer(&offer.change))
+        + &figure("PaCO₂ ", &about(settled.paco2_mmhg.p50, 0), &paco2_range(&settled.paco2_mmhg))
+        + &figure("pH ", &about(settled.ph.p50, 2), &ph_range(&settled.ph))
+        + &said("small", "offer-price", &words::price(&offer.price))
 }
