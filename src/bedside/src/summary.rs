@@ -49,29 +49,38 @@ fn push(band: &mut Band, q: Quantiles) {
 
 /// Spreads each (value, weight) over the measurement error, node by node: sorted pairs give sorted runs, which
 /// the sort that follows only has to merge.
-fn with_error(pairs: &[(f64, f64)], error: impl Fn(f64, f64) -> f64) -> Vec<(f64, f64)> {
+fn with_error(pairs: &[(f64, f64)], read: impl Fn(f64) -> Reading) -> Vec<(f64, f64)> {
     let mut sorted = pairs.to_vec();
     sorted.sort_by(|a, b| a.0.total_cmp(&b.0));
     let mut spread = Vec::with_capacity(pairs.len() * ERROR_NODES.len());
     for (z, share) in ERROR_NODES {
-        spread.extend(sorted.iter().map(|(value, weight)| (error(*value, z), weight * share)));
+        let Reading { factor, shift } = read(z);
+        spread.extend(sorted.iter().map(|(value, weight)| (value * factor + shift, weight * share)));
     }
     spread
 }
 
-fn read_paco2(paco2: f64, z: f64) -> f64 {
-    paco2 * libm::exp(s::ANALYSER_PACO2.value * z)
+/// What an analyser makes of a true value: `factor`·value + `shift`.
+struct Reading {
+    factor: f64,
+    shift: f64,
 }
 
-fn read_ph(ph: f64, z: f64) -> f64 {
-    ph + s::ANALYSER_PH.value * z
+/// A PaCO2 read with an error of `z` standard deviations.
+fn read_paco2(z: f64) -> Reading {
+    Reading { factor: libm::exp(s::ANALYSER_PACO2.value * z), shift: 0.0 }
+}
+
+/// A pH read with an error of `z` standard deviations.
+fn read_ph(z: f64) -> Reading {
+    Reading { factor: 1.0, shift: s::ANALYSER_PH.value * z }
 }
 
 /// Standard base excess of each member: from the gas's pH less its error, at the PaCO2 the member truly had.
 fn base_excesses(futures: &[Future], anchor: &Anchor) -> Vec<f64> {
     futures
         .iter()
-        .map(|f| standard_base_excess(read_ph(anchor.ph, -f.ph_error), f.paco2_at(anchor.at_min)))
+        .map(|f| standard_base_excess(anchor.ph - read_ph(f.ph_error).shift, f.paco2_at(anchor.at_min)))
         .collect()
 }
 

@@ -9,8 +9,8 @@ pub(crate) const LN_10: f64 = core::f64::consts::LN_10;
 /// pH is looked for between these; no blood inside the limits of typed values lies outside.
 const PH_SEARCH: (f64, f64) = (5.5, 9.5);
 
-/// Newton stops when a step is smaller than this: far under what any analyser resolves.
-const PH_STEP_DONE: f64 = 1e-12;
+/// Newton stops after a step smaller than this: what is left is its square.
+const PH_STEP_DONE: f64 = 1e-6;
 
 /// Newton from the middle needs 4–6 steps; the count bounds the loop.
 const PH_STEPS: usize = 40;

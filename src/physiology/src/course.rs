@@ -1,5 +1,7 @@
 //! The course of PaCO2 over a row of inputs, readable at any minute.
 
+use std::sync::Arc;
+
 use crate::Chemistry;
 use crate::body::{Body, Drive, State};
 use crate::stepper::{moments, rates, step};
@@ -13,100 +15,116 @@ pub struct Input {
     pub drive: Drive,
 }
 
-/// PaCO2 at the solver's moments, with its rate on both sides of each, so that it reads smoothly between.
+/// The solver's moments over a row of inputs, small steps first after each: one for all members.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Schedule {
+    minutes: Vec<f64>,
+    /// For each stretch the input that drives it and the position of its last moment.
+    stretches: Vec<(usize, usize)>,
+}
+
+impl Schedule {
+    /// From `span_min.0` to `span_min.1`; inputs change at `at_min`, in order, the first of them in force at the
+    /// start. `refine` (1 in use) divides every step.
+    #[must_use]
+    pub fn new(span_min: (f64, f64), at_min: &[f64], refine: u32) -> Self {
+        let (from, to) = span_min;
+        let inside = |minute: f64| {
+            if minute < from {
+                from
+            } else if minute > to {
+                to
+            } else {
+                minute
+            }
+        };
+        let mut schedule = Self { minutes: vec![from], stretches: vec![] };
+        for input in 0..at_min.len() {
+            let begins = if input == 0 { from } else { inside(at_min[input]) };
+            let ends = at_min.get(input + 1).map_or(to, |next| inside(*next));
+            if begins < ends {
+                schedule.minutes.extend(moments(begins, ends, refine).into_iter().skip(1));
+                schedule.stretches.push((input, schedule.minutes.len() - 1));
+            }
+        }
+        schedule
+    }
+}
+
+/// PaCO2 at one of the solver's moments, mmHg, with its rate on both sides, mmHg/min.
+#[derive(Debug, Clone, Copy, PartialEq)]
+struct Point {
+    paco2: f64,
+    rate_before: f64,
+    rate_after: f64,
+}
+
+/// PaCO2 over time, readable smoothly between the solver's moments.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Course {
-    minutes: Vec<f64>,
-    paco2: Vec<f64>,
-    /// Rate as the stretch after the moment sees it, mmHg/min.
-    rate_after: Vec<f64>,
-    /// Rate as the stretch before the moment sees it, mmHg/min.
-    rate_before: Vec<f64>,
+    schedule: Arc<Schedule>,
+    points: Vec<Point>,
     /// The state at the end.
     pub end: State,
 }
 
 impl Course {
-    /// Runs `body` from `start` at `from_min` to `to_min`. `inputs` are in order and the first is in force at
-    /// `from_min`. `refine` (1 in use) divides every step.
+    /// Runs `body` from `start` over `schedule`, driven by `inputs`.
     #[must_use]
     pub fn run(
         body: &Body,
         chemistry: &Chemistry,
         start: State,
-        span_min: (f64, f64),
+        schedule: &Arc<Schedule>,
         inputs: &[Input],
-        refine: u32,
     ) -> Self {
-        let (from_min, to_min) = span_min;
-        let mut course =
-            Course { minutes: vec![], paco2: vec![], rate_after: vec![], rate_before: vec![], end: start };
-        for (i, input) in inputs.iter().enumerate() {
-            let begins = if i == 0 || input.at_min < from_min { from_min } else { input.at_min };
-            let ends = inputs
-                .get(i + 1)
-                .map_or(to_min, |next| if next.at_min < to_min { next.at_min } else { to_min });
-            if begins < ends {
-                course.stretch(body, chemistry, &input.drive, (begins, ends), refine);
-            }
-        }
-        if course.minutes.is_empty() {
-            course.push(from_min, start.paco2_mmhg(), 0.0);
+        let mut points = Vec::with_capacity(schedule.minutes.len());
+        points.push(Point { paco2: start.paco2_mmhg(), rate_before: 0.0, rate_after: 0.0 });
+        let mut course = Self { schedule: Arc::clone(schedule), points, end: start };
+        let mut from = 0;
+        for &(input, last) in &schedule.stretches {
+            course.stretch(body, chemistry, &inputs[input].drive, &schedule.minutes[from..=last]);
+            from = last;
         }
         course
     }
 
-    fn stretch(
-        &mut self,
-        body: &Body,
-        chemistry: &Chemistry,
-        drive: &Drive,
-        span_min: (f64, f64),
-        refine: u32,
-    ) {
-        let moments = moments(span_min.0, span_min.1, refine);
+    fn stretch(&mut self, body: &Body, chemistry: &Chemistry, drive: &Drive, minutes: &[f64]) {
         let mut here = rates(body, drive, &self.end.levels);
-        match self.rate_after.last_mut() {
-            Some(after) => *after = here.paco2,
-            None => self.push(moments[0], self.end.paco2_mmhg(), here.paco2),
+        if let Some(point) = self.points.last_mut() {
+            point.rate_after = here.paco2;
         }
-        for pair in moments.windows(2) {
+        for pair in minutes.windows(2) {
             self.end = step(body, drive, &self.end, &here, pair[1] - pair[0], chemistry);
             here = rates(body, drive, &self.end.levels);
-            self.push(pair[1], self.end.paco2_mmhg(), here.paco2);
+            let paco2 = self.end.paco2_mmhg();
+            self.points.push(Point { paco2, rate_before: here.paco2, rate_after: here.paco2 });
         }
-    }
-
-    fn push(&mut self, minute: f64, paco2: f64, rate: f64) {
-        self.minutes.push(minute);
-        self.paco2.push(paco2);
-        self.rate_after.push(rate);
-        self.rate_before.push(rate);
     }
 
     /// PaCO2 in mmHg at `minute`; before the start its first value, after the end its last.
     #[must_use]
     pub fn paco2_at(&self, minute: f64) -> f64 {
-        let after = self.minutes.partition_point(|m| *m <= minute);
+        let minutes = &self.schedule.minutes;
+        let after = minutes.partition_point(|m| *m <= minute);
         if after == 0 {
-            return self.paco2[0];
+            return self.points[0].paco2;
         }
-        if after == self.minutes.len() {
-            return self.paco2[after - 1];
+        if after == minutes.len() {
+            return self.points[after - 1].paco2;
         }
-        let (i, j) = (after - 1, after);
-        let h = self.minutes[j] - self.minutes[i];
-        let t = (minute - self.minutes[i]) / h;
-        let (y0, y1) = (self.paco2[i], self.paco2[j]);
-        let (d0, d1) = (self.rate_after[i] * h, self.rate_before[j] * h);
-        let c2 = 3.0 * (y1 - y0) - 2.0 * d0 - d1;
-        let c3 = 2.0 * (y0 - y1) + d0 + d1;
-        y0 + t * (d0 + t * (c2 + t * c3))
+        let (from, to) = (&self.points[after - 1], &self.points[after]);
+        let h = minutes[after] - minutes[after - 1];
+        let t = (minute - minutes[after - 1]) / h;
+        let (d0, d1, rise) = (from.rate_after * h, to.rate_before * h, to.paco2 - from.paco2);
+        let c2 = 3.0 * rise - 2.0 * d0 - d1;
+        let c3 = d0 + d1 - 2.0 * rise;
+        from.paco2 + t * (d0 + t * (c2 + t * c3))
     }
 
     /// The solver's moments and the PaCO2 there.
     pub fn points(&self) -> impl Iterator<Item = (f64, f64)> + '_ {
-        self.minutes.iter().copied().zip(self.paco2.iter().copied())
+        self.schedule.minutes.iter().copied().zip(self.points.iter().map(|point| point.paco2))
     }
 }
 

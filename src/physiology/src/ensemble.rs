@@ -1,7 +1,9 @@
 //! Bodies that fit the gases, each with its weight, and what they do next. The past is run once; a finger on a
 //! stepper re-runs only the future, from the stored states.
 
-use crate::course::Input;
+use std::sync::Arc;
+
+use crate::course::{Input, Schedule};
 use crate::priors::{Member, Step};
 use crate::{Chemistry, Course};
 
@@ -67,8 +69,12 @@ impl Ensemble {
     pub fn past(&self, until_min: f64) -> Past {
         let first = self.members.first().map_or(0.0, |member| member.inputs[0].at_min);
         let until_min = if until_min > first { until_min } else { first };
-        let courses =
-            self.members.iter().map(|member| member.course(&self.chemistry, until_min, 1)).collect();
+        let at: Vec<f64> = self
+            .members
+            .first()
+            .map_or_else(Vec::new, |m| m.inputs.iter().map(|input| input.at_min).collect());
+        let schedule = Arc::new(Schedule::new((first, until_min), &at, 1));
+        let courses = self.members.iter().map(|m| m.course_over(&self.chemistry, &schedule)).collect();
         Past { until_min, courses }
     }
 
@@ -76,14 +82,17 @@ impl Ensemble {
     /// the change's `jump_sd` says how far R may move with it.
     #[must_use]
     pub fn futures<'a>(&self, past: &'a Past, to_min: f64, change: Option<&Step>) -> Vec<Future<'a>> {
+        let later = self.members.first().map_or(0, |m| in_force(&m.inputs, past.until_min));
+        let at: Vec<f64> = match (change, self.members.first()) {
+            (None, Some(member)) => member.inputs[later..].iter().map(|input| input.at_min).collect(),
+            _ => vec![past.until_min],
+        };
+        let schedule = Arc::new(Schedule::new((past.until_min, to_min), &at, 1));
         let weighed = self.members.iter().zip(&self.weights).zip(&self.extra).zip(&past.courses);
         let run = |(((member, weight), extra), before): (((&Member, &f64), &[f64; EXTRA]), &'a Course)| {
-            let inputs: Vec<Input> = match change {
-                Some(step) => vec![member.input(step, step.jump_sd * extra[0])],
-                None => in_force_and_later(&member.inputs, past.until_min),
-            };
-            let span = (past.until_min, to_min);
-            let course = Course::run(&member.body, &self.chemistry, before.end, span, &inputs, 1);
+            let changed = change.map(|step| [member.input(step, step.jump_sd * extra[0])]);
+            let inputs = changed.as_ref().map_or(&member.inputs[later..], |input| &input[..]);
+            let course = Course::run(&member.body, &self.chemistry, before.end, &schedule, inputs);
             Future {
                 past: before,
                 until_min: past.until_min,
@@ -97,8 +106,7 @@ impl Ensemble {
     }
 }
 
-/// The input in force at `minute` and those after it.
-fn in_force_and_later(inputs: &[Input], minute: f64) -> Vec<Input> {
-    let later = inputs.partition_point(|input| input.at_min <= minute);
-    inputs[later.saturating_sub(1)..].to_vec()
+/// Position of the input in force at `minute`.
+fn in_force(inputs: &[Input], minute: f64) -> usize {
+    inputs.partition_point(|input| input.at_min <= minute).saturating_sub(1)
 }

@@ -2,10 +2,13 @@
 //! how well it fits. Where too few carry the weight the proposal is matched to what they found and all are
 //! drawn and weighed anew. Members are never resampled: with a few gases that collapses onto a handful.
 
+use std::sync::Arc;
+
 use libm::{exp, log, sqrt};
 use sources as s;
 
 use crate::Chemistry;
+use crate::course::Schedule;
 use crate::draws::standard_normals;
 use crate::ensemble::{EXTRA, Ensemble};
 use crate::linear::{backward, cholesky, forward};
@@ -76,6 +79,20 @@ impl Learning<'_> {
     /// [`NoMode`] when no mode is found or fewer than 64 members (a quarter of them when fewer than 256 are
     /// asked for) carry the weight.
     pub fn ensemble(&self, members: usize, seed: u32) -> Result<Ensemble, NoMode> {
+        let last = self.observations.iter().map(|o| o.at_min).reduce(f64::max);
+        let schedule = last.map(|last| self.priors.schedule(last));
+        Fit { learning: *self, schedule }.ensemble(members, seed)
+    }
+}
+
+/// What is learnt from, with the solver's moments up to the last gas; none without one.
+struct Fit<'a> {
+    learning: Learning<'a>,
+    schedule: Option<Arc<Schedule>>,
+}
+
+impl Fit<'_> {
+    fn ensemble(&self, members: usize, seed: u32) -> Result<Ensemble, NoMode> {
         let (mode, root) = self.mode()?;
         let n = mode.len();
         let draws = standard_normals(members, n + EXTRA, seed);
@@ -103,7 +120,7 @@ impl Learning<'_> {
         }
         let extra = draws.iter().map(|row| [row[n], row[n + 1]]).collect();
         let Cloud { members, weights, effective, .. } = cloud;
-        Ok(Ensemble { members, weights, extra, chemistry: self.chemistry.clone(), effective })
+        Ok(Ensemble { members, weights, extra, chemistry: self.learning.chemistry.clone(), effective })
     }
 
     /// Members drawn from `proposal` (in the axes of the mode's curvature), each weighed once.
@@ -121,7 +138,7 @@ impl Learning<'_> {
             let xi = &row[..n];
             let point = proposal.point(xi);
             let u: Vec<f64> = mode.0.iter().zip(backward(mode.1, &point)).map(|(m, o)| m + o).collect();
-            let member = self.priors.member(&u, Some(self.chemistry));
+            let member = self.learning.priors.member(&u, Some(self.learning.chemistry));
             log_weights.push(0.5 * (square(xi) - square(&self.residuals(&u, &member))));
             members.push(member);
             points.push(point);
@@ -133,7 +150,7 @@ impl Learning<'_> {
 
     /// The most likely point and the Cholesky factor of the curvature there.
     fn mode(&self) -> Result<(Vec<f64>, Vec<Vec<f64>>), NoMode> {
-        let n = self.priors.dimensions();
+        let n = self.learning.priors.dimensions();
         let mut u = vec![0.0; n];
         for _ in 0..PASSES {
             let (gradient, curvature) = self.linearised(&u);
@@ -163,7 +180,7 @@ impl Learning<'_> {
         let residual = |moves: [(usize, f64); 2]| {
             let mut moved = u.to_vec();
             moves.iter().for_each(|(i, by)| moved[*i] += by);
-            self.priors.member(&moved, None).production_residual
+            self.learning.priors.member(&moved, None).production_residual
         };
         let here = residual([(0, 0.0), (0, 0.0)]);
         let d = BEND_DIFFERENCE;
@@ -179,12 +196,13 @@ impl Learning<'_> {
     /// Jᵀr and JᵀJ at `u`.
     fn linearised(&self, u: &[f64]) -> (Vec<f64>, Vec<Vec<f64>>) {
         let n = u.len();
-        let here = self.residuals(u, &self.priors.member(u, Some(self.chemistry)));
+        let here = self.residuals(u, &self.learning.priors.member(u, Some(self.learning.chemistry)));
         let mut moved = u.to_vec();
         let columns: Vec<Vec<f64>> = (0..n)
             .map(|i| {
                 moved[i] = u[i] + DIFFERENCE;
-                let there = self.residuals(&moved, &self.priors.member(&moved, Some(self.chemistry)));
+                let there = self
+                    .residuals(&moved, &self.learning.priors.member(&moved, Some(self.learning.chemistry)));
                 moved[i] = u[i];
                 there.iter().zip(&here).map(|(a, b)| (a - b) / DIFFERENCE).collect()
             })
@@ -199,10 +217,11 @@ impl Learning<'_> {
     fn residuals(&self, u: &[f64], member: &Member) -> Vec<f64> {
         let mut residuals = u.to_vec();
         residuals[0] = member.production_residual;
-        if let Some(last) = self.observations.iter().map(|o| o.at_min).reduce(f64::max) {
-            let course = member.course(self.chemistry, last, 1);
+        if let Some(schedule) = &self.schedule {
+            let course = member.course_over(self.learning.chemistry, schedule);
             residuals.extend(
-                self.observations
+                self.learning
+                    .observations
                     .iter()
                     .map(|o| (log(course.paco2_at(o.at_min)) - log(o.paco2_mmhg)) / o.ln_sd),
             );

@@ -2,11 +2,13 @@
 //! before a gas, but the first: that one is ln R, R = VCO2/(1 − VD/VT), the one thing a settled gas measures.
 //! The prior stays on production and dead spaces; taking ln R as a coordinate only turns the axes.
 
+use std::sync::Arc;
+
 use libm::{exp, log};
 use sources as s;
 
 use crate::body::{Body, Drive, Pool, State};
-use crate::course::Input;
+use crate::course::{Input, Schedule};
 use crate::person::Patient;
 use crate::{Chemistry, Course};
 
@@ -184,6 +186,12 @@ impl Priors {
     #[must_use]
     pub fn dimensions(&self) -> usize {
         JUMP_FIRST + self.steps.iter().filter(|step| step.jump_sd > 0.0).count()
+    }
+
+    /// The solver's moments from the first step to `to_min`.
+    pub(crate) fn schedule(&self, to_min: f64) -> Arc<Schedule> {
+        let at: Vec<f64> = self.steps.iter().map(|step| step.at_min).collect();
+        Arc::new(Schedule::new((at[0], to_min), &at, 1))
     }
 
     /// The steps.
@@ -480,7 +488,12 @@ impl Member {
     /// The course from the first step to `to_min`; `refine` (1 in use) divides every step of the solver.
     #[must_use]
     pub fn course(&self, chemistry: &Chemistry, to_min: f64, refine: u32) -> Course {
-        let from = self.inputs[0].at_min;
-        Course::run(&self.body, chemistry, self.start(chemistry), (from, to_min), &self.inputs, refine)
+        let at: Vec<f64> = self.inputs.iter().map(|input| input.at_min).collect();
+        self.course_over(chemistry, &Arc::new(Schedule::new((at[0], to_min), &at, refine)))
+    }
+
+    /// The course over a schedule made from the moments of its inputs.
+    pub(crate) fn course_over(&self, chemistry: &Chemistry, schedule: &Arc<Schedule>) -> Course {
+        Course::run(&self.body, chemistry, self.start(chemistry), schedule, &self.inputs)
     }
 }
