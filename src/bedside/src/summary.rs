@@ -1,7 +1,8 @@
 //! From weighted members to the percentiles that are shown.
 
 use physiology::{
-    Future, hco3_mmol_l, minutes_to_share, minutes_to_within, ph_at, standard_base_excess, weighted_quantiles,
+    Future, hco3_mmol_l, minutes_to_share, minutes_to_within, ph_at, sort_weighted, standard_base_excess,
+    weighted_quantiles,
 };
 use sources as s;
 
@@ -51,7 +52,7 @@ fn push(band: &mut Band, q: Quantiles) {
 /// the sort that follows only has to merge.
 fn with_error(pairs: &[(f64, f64)], read: impl Fn(f64) -> Reading) -> Vec<(f64, f64)> {
     let mut sorted = pairs.to_vec();
-    sorted.sort_by(|a, b| a.0.total_cmp(&b.0));
+    sort_weighted(&mut sorted);
     let mut spread = Vec::with_capacity(pairs.len() * ERROR_NODES.len());
     for (z, share) in ERROR_NODES {
         let Reading { factor, shift } = read(z);

@@ -35,8 +35,7 @@ impl Case {
         if let Some(present) = self.entries.iter().find(|e| e.id == entry.id) {
             return if *present == entry { Ok(()) } else { Err(CaseError::SameIdDiffers(entry.id)) };
         }
-        let place = self.entries.partition_point(|e| order(e) < order(&entry));
-        self.entries.insert(place, entry);
+        put(&mut self.entries, entry);
         Ok(())
     }
 
@@ -51,24 +50,24 @@ impl Case {
     #[must_use]
     pub fn resolved(&self) -> Vec<Entry> {
         let mut resolved: Vec<Entry> = Vec::with_capacity(self.entries.len());
+        let mut corrections: Vec<(&Entry, &crate::Correction)> = Vec::new();
         for entry in &self.entries {
-            if !matches!(entry.kind, EntryKind::Correction(_)) {
+            if let EntryKind::Correction(correction) = &entry.kind {
+                let written = |e: &Entry| (e.written_at.unwrap_or(e.at), e.id.clone());
+                let place = corrections.partition_point(|(earlier, _)| written(earlier) < written(entry));
+                corrections.insert(place, (entry, correction));
+            } else {
                 resolved.push(entry.clone());
             }
         }
-        let mut corrections: Vec<(&Entry, &crate::Correction)> = self
-            .entries
-            .iter()
-            .filter_map(|e| if let EntryKind::Correction(c) = &e.kind { Some((e, c)) } else { None })
-            .collect();
-        corrections.sort_by_key(|(e, _)| (e.written_at.unwrap_or(e.at), e.id.clone()));
         for (_, correction) in corrections {
-            if let Some(target) = resolved.iter_mut().find(|e| e.id == correction.of) {
+            if let Some(place) = resolved.iter().position(|e| e.id == correction.of) {
+                let mut target = resolved.remove(place);
                 target.kind = (*correction.kind).clone();
                 target.at = correction.at.unwrap_or(target.at);
+                put(&mut resolved, target);
             }
         }
-        resolved.sort_by(|a, b| order(a).cmp(&order(b)));
         resolved
     }
 
@@ -128,6 +127,12 @@ impl Case {
     pub fn join(&mut self, other: &Case) -> Result<(), CaseError> {
         other.entries.iter().try_for_each(|entry| self.add(entry.clone()))
     }
+}
+
+/// Puts an entry in its place among entries in order.
+fn put(entries: &mut Vec<Entry>, entry: Entry) {
+    let place = entries.partition_point(|e| order(e) < order(&entry));
+    entries.insert(place, entry);
 }
 
 /// The total order of entries, the same on every phone.

@@ -32,5 +32,5 @@ pub use person::{
     Patient, SedationDepth, Sex, predicted_body_weight_kg, production_factor, resting_production,
 };
 pub use priors::{Exact, JUMP_FIRST, Means, Member, Priors, Step};
-pub use quantile::{weighted_quantile, weighted_quantiles};
+pub use quantile::{sort_weighted, weighted_quantile, weighted_quantiles};
 pub use saturation::{oxygen_saturation, saturation_in_blood};

@@ -4,18 +4,20 @@
 /// not negative and not all zero; `pairs` are (value, weight) and come back sorted.
 #[must_use]
 pub fn weighted_quantile(pairs: &mut [(f64, f64)], p: f64) -> f64 {
-    sort(pairs);
+    sort_weighted(pairs);
     read(pairs, p)
 }
 
 /// Several quantiles of the same members.
 #[must_use]
 pub fn weighted_quantiles<const N: usize>(pairs: &mut [(f64, f64)], shares: [f64; N]) -> [f64; N] {
-    sort(pairs);
+    sort_weighted(pairs);
     shares.map(|p| read(pairs, p))
 }
 
-fn sort(pairs: &mut [(f64, f64)]) {
+/// Sorts (value, weight) by value; runs that are in order already are only merged.
+#[inline(never)]
+pub fn sort_weighted(pairs: &mut [(f64, f64)]) {
     pairs.sort_by(|a, b| a.0.total_cmp(&b.0));
 }
 
