@@ -26,6 +26,8 @@ pub fn command(mut arguments: Arguments) -> Result<()> {
 /// Builds the site and writes it into a folder.
 pub fn into(folder: &Path) -> Result<Site> {
     let began = Instant::now();
+    // Before the long part, not after it.
+    site::may_be_replaced(folder)?;
     let site = site()?;
     site.write(folder)?;
     eprintln!(

@@ -23,7 +23,10 @@ const PORT: u16 = 8080;
 
 /// `cargo xtask serve`.
 pub fn command(mut arguments: Arguments) -> Result<()> {
-    let port = arguments.opt_value_from_str("--port")?.unwrap_or(PORT);
+    let port = arguments
+        .opt_value_from_str("--port")
+        .context("--port takes a number from 0 (any free one) to 65535")?
+        .unwrap_or(PORT);
     let built = arguments.contains("--no-build");
     let folder = dist(&mut arguments)?;
     nothing_else(arguments)?;

@@ -96,7 +96,30 @@ fn bind(artefact: &Path) -> Result<Program> {
             "the crate {folder} brings inline JavaScript, which this build can't name"
         );
     }
-    Ok(Program { glue: output.js().to_owned(), wasm: output.wasm_mut().emit_wasm() })
+    let mut wasm = output.wasm_mut().emit_wasm();
+    without_machine_marks(&mut wasm);
+    Ok(Program { glue: output.js().to_owned(), wasm })
+}
+
+/// Leptos marks its split points by a digest of where its own source lies on the building machine, the one thing in the
+/// module that differs between two machines. The marks are numbered instead, which keeps them apart and of one length.
+fn without_machine_marks(wasm: &mut [u8]) {
+    const MARK: &[u8] = b"_WASM_SPLIT_MARKER_";
+    const DIGEST: usize = 16;
+    let mut seen: Vec<Vec<u8>> = Vec::new();
+    let last = wasm.len().saturating_sub(MARK.len() + DIGEST);
+    for at in 0..=last {
+        let digest = at + MARK.len()..at + MARK.len() + DIGEST;
+        if !wasm[at..].starts_with(MARK) || !wasm[digest.clone()].iter().all(u8::is_ascii_hexdigit) {
+            continue;
+        }
+        let found = wasm[digest.clone()].to_vec();
+        let number = seen.iter().position(|other| *other == found).unwrap_or_else(|| {
+            seen.push(found);
+            seen.len() - 1
+        });
+        wasm[digest].copy_from_slice(format!("{number:0DIGEST$}").as_bytes());
+    }
 }
 
 fn refuse_home_paths(wasm: &[u8]) -> Result<()> {
@@ -120,6 +143,19 @@ mod tests {
         assert_eq!(artefact_path(library), None);
         assert_eq!(artefact_path(binary), Some(PathBuf::from("/t/app.wasm")));
         assert_eq!(artefact_path("not a message"), None);
+    }
+
+    #[test]
+    fn marks_of_the_machine_are_numbered() {
+        let mut wasm = *b"a_WASM_SPLIT_MARKER_648d98631ae179d3b_WASM_SPLIT_MARKER_732e786d2a082da8c_WASM_SPLIT_MARKER_648d98631ae179d3";
+        without_machine_marks(&mut wasm);
+        assert_eq!(
+            std::str::from_utf8(&wasm),
+            Ok(
+                "a_WASM_SPLIT_MARKER_0000000000000000b_WASM_SPLIT_MARKER_0000000000000001c_WASM_SPLIT_MARKER_0000000000000000"
+            )
+        );
+        without_machine_marks(&mut [0; 3]);
     }
 
     #[test]

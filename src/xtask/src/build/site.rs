@@ -140,19 +140,25 @@ impl Site {
     }
 }
 
-fn clear(folder: &Path) -> Result<()> {
-    if !folder.exists() {
-        return Ok(());
-    }
-    let is_empty =
-        fs::read_dir(folder).with_context(|| format!("can't list {}", folder.display()))?.next().is_none();
-    if !is_empty && !folder.join("sw.js").is_file() {
+/// Refuses a folder that holds something other than an earlier site.
+pub fn may_be_replaced(folder: &Path) -> Result<()> {
+    let has_files = folder.exists()
+        && fs::read_dir(folder).with_context(|| format!("can't list {}", folder.display()))?.next().is_some();
+    if has_files && !folder.join("sw.js").is_file() {
         bail!(
             "{} holds something other than a built site; choose another folder or empty it",
             folder.display()
         );
     }
-    fs::remove_dir_all(folder).with_context(|| format!("can't clear {}", folder.display()))
+    Ok(())
+}
+
+fn clear(folder: &Path) -> Result<()> {
+    may_be_replaced(folder)?;
+    if folder.exists() {
+        fs::remove_dir_all(folder).with_context(|| format!("can't clear {}", folder.display()))?;
+    }
+    Ok(())
 }
 
 fn compress_one(file: &mut File) -> Result<()> {
