@@ -24,15 +24,22 @@ pub fn root() -> AnyView {
         room
     });
     // The case is part of the key: another case's room is drawn anew.
-    let place = Memo::new(move |_| (app.room.get(), app.open.with(|open| open.as_ref().map(|o| o.id.clone()))));
-    let room = move || match place.get().0 {
-        Room::Start => start::start(app),
-        Room::Gas => gas::gas(app),
-        Room::Settings => settings::settings(app),
-        Room::Now => now::now(app),
-        Room::Change => change::change(app),
-        Room::Record => record::record(app),
-        Room::Person => person::person(app),
+    let place = Memo::new(move |_| {
+        let case = app.open.with(|open| open.as_ref().map(|open| open.id.0.clone()));
+        app.room.get().hash().to_owned() + &case.unwrap_or_default()
+    });
+    let room = move || {
+        // Read, not only tracked: a memo that was never read follows nothing.
+        place.with(|_| ());
+        match app.room.get_untracked() {
+            Room::Start => start::start(app),
+            Room::Gas => gas::gas(app),
+            Room::Settings => settings::settings(app),
+            Room::Now => now::now(app),
+            Room::Change => change::change(app),
+            Room::Record => record::record(app),
+            Room::Person => person::person(app),
+        }
     };
     let class = move || if app.active.get().is_some() { "page keys-open" } else { "page" };
     view! {

@@ -1,6 +1,7 @@
 //! State of the whole app, owned by the root: the book, the open case and its study, what is being typed.
 
 pub mod app;
+pub mod book;
 pub mod choice;
 pub mod demo;
 pub mod draft;

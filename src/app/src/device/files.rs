@@ -50,6 +50,6 @@ pub fn pasted(then: impl FnOnce(Option<String>) + 'static) {
     let Some(clipboard) = clipboard else { return then(None) };
     spawn_local(async move {
         let text = JsFuture::from(clipboard.read_text()).await;
-        then(text.ok().and_then(|text| JsValue::from(text).as_string()));
+        then(text.ok().and_then(|text| text.as_string()));
     });
 }

@@ -46,12 +46,17 @@ pub fn focus(id: &'static str) {
     });
 }
 
+/// Shows the top of the room.
+pub fn to_top() {
+    if let Ok(Some(scroll)) = document().query_selector(".scroll") {
+        scroll.set_scroll_top(0);
+    }
+}
+
 /// A room that was entered is read from its title and seen from its top.
 pub fn enter_room(title_id: &'static str) {
     request_animation_frame(move || {
-        if let Ok(Some(scroll)) = document().query_selector(".scroll") {
-            scroll.set_scroll_top(0);
-        }
+        to_top();
         if let Some(title) = element(title_id) {
             let _ = title.focus();
         }

@@ -15,7 +15,8 @@ pub fn bar(app: App) -> AnyView {
     for (room, name) in ROOMS {
         let current = move || if app.room.get() == room { "page" } else { "false" };
         links.push(
-            view! { <a class="bar-room" href=room.hash() aria-current=move || current()>{name}</a> }.into_any(),
+            view! { <a class="bar-room" href=room.hash() aria-current=move || current()>{name}</a> }
+                .into_any(),
         );
     }
     view! { <nav class="bar" aria-label=words::ROOMS hidden=move || gone()>{links}</nav> }.into_any()

@@ -10,7 +10,7 @@ use crate::words::record as words;
 
 /// Chooses a case file and opens it as a new case.
 pub fn import(app: App) -> AnyView {
-    let chosen = move |event: web_sys::Event| {
+    let chosen = move |event: leptos::ev::Event| {
         let Some(input) = page::input(&event) else { return };
         files::chosen(&input, logbook::LARGEST_FILE_BYTES, move |read| match read {
             Ok(text) => {
@@ -19,8 +19,8 @@ pub fn import(app: App) -> AnyView {
                     page::go(Room::Now.hash());
                 }
             }
-            Err(0) => app.trouble.set(Some(words::UNREADABLE.to_owned())),
-            Err(bytes) => app.trouble.set(Some(FileError::TooLarge { bytes }.to_string())),
+            Err(0) => app.trouble.set(words::UNREADABLE.to_owned()),
+            Err(bytes) => app.trouble.set(FileError::TooLarge { bytes }.to_string()),
         });
     };
     view! {
@@ -37,6 +37,6 @@ pub fn export(app: App) {
     let Some(text) = app.export() else { return };
     let name = words::file_name(&untrack(|| app.label()).unwrap_or_default(), &clock::now());
     if files::download(&name, &text).is_err() {
-        app.trouble.set(Some(words::NO_EXPORT.to_owned()));
+        app.trouble.set(words::NO_EXPORT.to_owned());
     }
 }

@@ -8,6 +8,7 @@ use case::{Case, Now};
 use leptos::prelude::*;
 
 use super::scale::Scale;
+use crate::state::app::App;
 use crate::state::outlook;
 use crate::words::now as words;
 use crate::words::values;
@@ -111,18 +112,21 @@ fn shown(forecast: &Forecast, to: f64, values: &mut Vec<f64>) {
     }
 }
 
-/// The drawing; nothing where there is no picture. `at` is where the slider stands.
-pub fn drawing(picture: Memo<Option<Picture>>, at: RwSignal<usize>) -> AnyView {
-    let drawn = move || picture.with(|p| p.as_ref().map(|p| picture::svg(p, at.get())).unwrap_or_default());
+/// Where a chart comes from; nothing where there is no forecast.
+pub type Source = fn(App) -> Option<Picture>;
+
+/// The drawing. `at` is where the slider stands.
+pub fn drawing(app: App, picture: Source, at: RwSignal<usize>) -> AnyView {
+    let drawn = move || picture(app).map(|picture| picture::svg(&picture, at.get())).unwrap_or_default();
     view! { <div class="chart" inner_html=move || drawn()></div> }.into_any()
 }
 
 /// Its slider and its table.
-pub fn reading(picture: Memo<Option<Picture>>, at: RwSignal<usize>) -> AnyView {
+pub fn reading(app: App, picture: Source, at: RwSignal<usize>) -> AnyView {
     view! {
-        <div class="chart-reading" hidden=move || picture.with(Option::is_none)>
-            {reading::slider(picture, at)}
-            {reading::table(picture)}
+        <div class="chart-reading" hidden=move || picture(app).is_none()>
+            {reading::slider(app, picture, at)}
+            {reading::table(app, picture)}
         </div>
     }
     .into_any()

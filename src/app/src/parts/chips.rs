@@ -69,10 +69,7 @@ pub fn group(
 }
 
 /// What is wrong, beside its control.
-pub fn error(
-    id: &'static str,
-    words: impl Fn() -> Option<String> + Copy + Send + Sync + 'static,
-) -> AnyView {
+pub fn error(id: &'static str, words: impl Fn() -> Option<String> + Copy + Send + Sync + 'static) -> AnyView {
     view! {
         <p class="fault" id=id hidden=move || words().is_none()>
             {move || words().unwrap_or_default()}

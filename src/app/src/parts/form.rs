@@ -30,7 +30,6 @@ pub struct Form {
 /// The rows and the open questions.
 pub fn form(app: App, form: Form) -> AnyView {
     let rows = Memo::new(move |_| (form.rows)(app));
-    let open = Memo::new(move |_| if app.asked.get() { (form.ask)(app) } else { vec![] });
     let all = move || {
         let mut all = vec![];
         for row in rows.get() {
@@ -40,7 +39,7 @@ pub fn form(app: App, form: Form) -> AnyView {
     };
     view! {
         {move || all()}
-        {questions(app, open, form.mend, move || (form.press)(app))}
+        {questions(app, form)}
     }
     .into_any()
 }
@@ -50,9 +49,7 @@ fn one_row(app: App, row: Row, form: Form) -> AnyView {
     match row {
         Row::Heading(words) => view! { <h2 class="form-heading">{words}</h2> }.into_any(),
         Row::Note(words) => view! { <p class="note">{words}</p> }.into_any(),
-        Row::Chips(choice, _) => {
-            chips(app, choice, fault, move || lead_on(app, form, Place::Chips(choice)))
-        }
+        Row::Chips(choice, _) => chips(app, choice, fault, move || lead_on(app, form, Place::Chips(choice))),
         Row::Number(field, _) => number_field(app, field, fault, form.hint, move || next(app, form)),
     }
 }
@@ -61,7 +58,7 @@ fn one_row(app: App, row: Row, form: Form) -> AnyView {
 fn said_fault(app: App, row: Row) -> Option<String> {
     let asked = app.asked.get();
     let left = match row {
-        Row::Number(field, _) => app.left.with(|left| left.contains(&field)),
+        Row::Number(field, _) => app.was_left(field),
         _ => false,
     };
     if !asked && !left {
@@ -103,9 +100,13 @@ pub fn next(app: App, form: Form) {
 pub fn may_write(app: App, form: Form) -> bool {
     let faults = untrack(|| app.sheet.with(|sheet| rows::faults(sheet, &(form.rows)(app), app.group())));
     app.asked.set(true);
+    app.trouble.set(String::new());
     if let Some((place, words)) = faults.into_iter().next() {
         app.tell(&words);
         open(app, place);
+        if let Place::Number(field) = place {
+            page::into_sight(field.spec().fault_id);
+        }
         return false;
     }
     let open = untrack(|| (form.ask)(app));

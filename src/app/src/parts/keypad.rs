@@ -1,11 +1,13 @@
 //! The keypad: large keys that act on release, and the strip that stands in its place while the phone's is used.
 
-use leptos::ev::MouseEvent;
+use std::cell::Cell;
+use std::rc::Rc;
+
 use leptos::prelude::*;
 
 use super::buttons::{perhaps, press};
 use super::keys::{Bounce, Key, press as pressed};
-use super::touch::{Look, key};
+use super::touch::{Acts, Look, key, stay};
 use crate::device::{clock, files, page};
 use crate::state::app::App;
 use crate::words::form as words;
@@ -45,7 +47,7 @@ const KEYS: [(&str, Act); 16] = [
 ];
 
 /// The keypad, while a field is open; `next` goes to the next field.
-pub fn keypad(app: App, next: impl Fn() + Copy + Send + 'static) -> AnyView {
+pub fn keypad(app: App, next: fn(App)) -> AnyView {
     let open = Memo::new(move |_| app.active.get().is_some());
     let keys = move || {
         perhaps(open.get().then(|| if app.phone_keys.get() { strip(app, next) } else { all(app, next) }))
@@ -53,24 +55,24 @@ pub fn keypad(app: App, next: impl Fn() + Copy + Send + 'static) -> AnyView {
     view! { {move || keys()} }.into_any()
 }
 
-fn strip(app: App, next: impl Fn() + Copy + 'static) -> AnyView {
+fn strip(app: App, next: fn(App)) -> AnyView {
     let ours = move || {
         app.use_phone_keys(false);
         refocus(app);
     };
     let close = move || app.active.set(None);
     view! {
-        <div class="strip" on:mousedown=|event: MouseEvent| event.prevent_default()>
+        <div class="strip" on:mousedown=stay()>
             <button type="button" class="plain" on:click=press(ours)>{words::OUR_KEYS}</button>
             <button type="button" class="plain" on:click=press(close)>{words::CLOSE_KEYS}</button>
-            <button type="button" class="plain" on:click=press(next)>{words::NEXT}</button>
+            <button type="button" class="plain" on:click=press(move || next(app))>{words::NEXT}</button>
         </div>
     }
     .into_any()
 }
 
-fn all(app: App, next: impl Fn() + Copy + 'static) -> AnyView {
-    let bounce = StoredValue::new(Bounce::default());
+fn all(app: App, next: fn(App)) -> AnyView {
+    let bounce = Rc::new(Cell::new(Bounce::default()));
     let mut keys = vec![];
     for (sign, what) in KEYS {
         let class = match what {
@@ -78,24 +80,28 @@ fn all(app: App, next: impl Fn() + Copy + 'static) -> AnyView {
             Act::Type(Key::Digit(_) | Key::Point) => "key",
             _ => "key key-word",
         };
+        let bounce = Rc::clone(&bounce);
         let act = move || {
             if what == Act::Next {
-                next();
+                next(app);
             } else {
-                act(app, what, bounce);
+                act(app, what, &bounce);
             }
             true
         };
-        keys.push(key(Look { sign, name: sign.to_owned(), class, repeats: false }, Box::new(act)));
+        let acts = if matches!(what, Act::Type(_)) { Acts::AtRelease } else { Acts::AtClick };
+        keys.push(key(Look { sign, name: sign.to_owned(), class, acts }, Box::new(act)));
     }
     view! { <div class="keypad" role="group" aria-label=words::KEYPAD>{keys}</div> }.into_any()
 }
 
-fn act(app: App, what: Act, bounce: StoredValue<Bounce>) {
+fn act(app: App, what: Act, bounce: &Cell<Bounce>) {
     match what {
         Act::Type(key) => {
-            let counts = bounce.try_update_value(|bounce| bounce.counts(key, clock::since_load_ms()));
-            if counts == Some(true) {
+            let mut last = bounce.get();
+            let counts = last.counts(key, clock::since_load_ms());
+            bounce.set(last);
+            if counts {
                 type_key(app, key);
             }
         }
@@ -126,7 +132,7 @@ fn paste(app: App) {
             // What was pasted is judged at once: nobody goes on typing it.
             app.leave(field);
         }
-        _ => app.trouble.set(Some(words::NO_PASTE.to_owned())),
+        _ => app.trouble.set(words::NO_PASTE.to_owned()),
     });
 }
 

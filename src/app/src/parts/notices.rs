@@ -9,19 +9,18 @@ use crate::words::start as words;
 
 /// The notices that apply now.
 pub fn notices(app: App) -> AnyView {
-    let trouble = move || app.trouble.get();
     let unsaved = move || match app.unsaved() {
-        0 => None,
-        count => Some(words::unsaved(count)),
+        0 => String::new(),
+        count => words::unsaved(count),
     };
     let demo = move || app.label().is_some_and(|label| label == words::DEMO_LABEL);
     view! {
         <div class="notices">
-            <p class="notice notice-trouble" role="alert" hidden=move || trouble().is_none()>
-                {move || trouble().unwrap_or_default()}
+            <p class="notice notice-trouble" role="alert" hidden=move || app.trouble.get().is_empty()>
+                {move || app.trouble.get()}
             </p>
-            <p class="notice notice-trouble" role="alert" hidden=move || unsaved().is_none()>
-                {move || unsaved().unwrap_or_default()}
+            <p class="notice notice-trouble" role="alert" hidden=move || unsaved().is_empty()>
+                {move || unsaved()}
             </p>
             <div class="notice" hidden=move || app.update.get() != "ready">
                 {words::NEW_VERSION} {plain(words::TAKE_IT.to_owned(), ready::take_update)}

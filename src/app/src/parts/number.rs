@@ -66,7 +66,7 @@ pub fn input_mode(app: App) -> &'static str {
 }
 
 /// What was typed goes into the sheet as it is.
-pub fn typing(app: App, field: Field) -> Box<dyn FnMut(web_sys::Event)> {
+pub fn typing(app: App, field: Field) -> Box<dyn FnMut(leptos::ev::Event)> {
     Box::new(move |event| {
         if let Some(input) = page::input(&event) {
             app.sheet.update(|sheet| sheet.set_text(field, input.value()));

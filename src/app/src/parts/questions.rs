@@ -4,51 +4,50 @@ use bedside::{Question, QuestionKind};
 use leptos::prelude::*;
 
 use super::buttons::plain;
+use super::form::Form;
 use crate::device::page;
 use crate::state::app::App;
-use crate::state::field::Field;
 use crate::words::form as words;
 use crate::words::spoken::spoken;
 
-/// The questions still open; Mend it leads to `mend`, and `then` runs after an answer.
-pub fn questions(
-    app: App,
-    open: Memo<Vec<Question>>,
-    mend: Field,
-    then: impl Fn() + Copy + Send + 'static,
-) -> AnyView {
+/// The questions still open, once the form was to be written.
+pub fn questions(app: App, form: Form) -> AnyView {
+    let open = move || if app.asked.get() { (form.ask)(app) } else { vec![] };
+    // Drawn anew only when the questions are others, so that the focus on an answer is not lost.
+    let asked = Memo::new(move |_| open().iter().map(|question| question.words.as_str()).collect::<String>());
     let all = move || {
+        asked.with(|_| ());
         let mut all = vec![];
-        for question in open.get() {
-            all.push(one(app, question, mend, then));
+        for question in untrack(open) {
+            all.push(one(app, question, form));
         }
         all.into_any()
     };
     view! {
-        <div id="questions" tabindex="-1" class="questions" hidden=move || open.with(Vec::is_empty)>
+        <div id="questions" tabindex="-1" class="questions" hidden=move || asked.with(String::is_empty)>
             {move || all()}
         </div>
     }
     .into_any()
 }
 
-fn one(app: App, question: Question, mend: Field, then: impl Fn() + Copy + 'static) -> AnyView {
+fn one(app: App, question: Question, form: Form) -> AnyView {
     let said = question.words.clone();
     let as_typed = move || {
         app.sheet.update(|sheet| sheet.answered.push(said.clone()));
-        then();
+        (form.press)(app);
     };
     let answers = match question.kind {
         QuestionKind::MmhgOrKpa { typed, as_kpa_mmhg } => {
             let in_kpa = move || {
                 app.sheet.update(|sheet| sheet.kpa = true);
-                then();
+                (form.press)(app);
             };
             vec![plain(words::is_mmhg(typed), as_typed), plain(words::is_kpa(typed, as_kpa_mmhg), in_kpa)]
         }
         QuestionKind::Hco3Contradicts { .. } | QuestionKind::Unusual => vec![
             plain(words::AS_TYPED.to_owned(), as_typed),
-            plain(words::MEND_IT.to_owned(), move || page::focus(mend.spec().id)),
+            plain(words::MEND_IT.to_owned(), move || page::focus(form.mend.spec().id)),
         ],
     };
     let name = spoken(&question.words);

@@ -80,7 +80,7 @@ impl Scale {
     pub fn line(&self, minutes: &[f64], values: &[f64]) -> String {
         let mut path = String::new();
         for (minute, mmhg) in minutes.iter().zip(values) {
-            self.to_point(&mut path, *minute, *mmhg);
+            self.add_point(&mut path, *minute, *mmhg);
         }
         path
     }
@@ -89,7 +89,7 @@ impl Scale {
     pub fn area(&self, minutes: &[f64], low: &[f64], high: &[f64]) -> String {
         let mut path = self.line(minutes, high);
         for (minute, mmhg) in minutes.iter().zip(low).rev() {
-            self.to_point(&mut path, *minute, *mmhg);
+            self.add_point(&mut path, *minute, *mmhg);
         }
         if !path.is_empty() {
             path.push('Z');
@@ -97,7 +97,7 @@ impl Scale {
         path
     }
 
-    fn to_point(&self, path: &mut String, minute: f64, mmhg: f64) {
+    fn add_point(&self, path: &mut String, minute: f64, mmhg: f64) {
         if minute >= self.from && minute <= self.to && mmhg.is_finite() {
             let letter = if path.is_empty() { 'M' } else { 'L' };
             path.push_str(&format!("{letter}{:.1} {:.1}", self.x(minute), self.y(mmhg)));

@@ -1,12 +1,13 @@
 //! A stepper: a number with a key less and a key more. A spin button for screen readers and arrow keys.
 
-use leptos::ev::KeyboardEvent;
+use leptos::ev::{FocusEvent, KeyboardEvent};
 use leptos::prelude::*;
 
 use super::chips::error;
 use super::keys::step;
-use super::number::{input_mode, leaving, opening, typing};
-use super::touch::{Look, key};
+use super::number::{input_mode, leaving, typing};
+use super::touch::{Acts, Look, key};
+use crate::device::page;
 use crate::state::app::App;
 use crate::state::field::Field;
 use crate::state::sheet::Reading;
@@ -38,7 +39,7 @@ pub fn stepper(app: App, steps: Steps, next: fn(App)) -> AnyView {
         if text.is_empty() && !open { as_typed(old) } else { text }
     };
     let fault = move || match reading() {
-        Reading::Wrong(words) if app.left.with(|left| left.contains(&field)) => Some(words),
+        Reading::Wrong(words) if app.was_left(field) => Some(words),
         _ => None,
     };
     let move_by = move |by: f64| {
@@ -63,7 +64,12 @@ pub fn stepper(app: App, steps: Steps, next: fn(App)) -> AnyView {
         };
         event.prevent_default();
     });
-    let look = |sign, name| Look { sign, name, class: "step", repeats: true };
+    let look = |sign, name| Look { sign, name, class: "step", acts: Acts::WhileHeld };
+    // The answer and the chart are what is watched while it is typed.
+    let opened: Box<dyn FnMut(FocusEvent)> = Box::new(move |_| {
+        app.active.set(Some(field));
+        page::to_top();
+    });
     let class = move || if app.active.get() == Some(field) { "stepper active" } else { "stepper" };
     let said = move || format!("{} {}", as_typed(value()), limit.unit);
     view! {
@@ -91,7 +97,7 @@ pub fn stepper(app: App, steps: Steps, next: fn(App)) -> AnyView {
                     prop:value=move || shown()
                     on:input=typing(app, field)
                     on:keydown=keyed
-                    on:focus=opening(app, field)
+                    on:focus=opened
                     on:blur=leaving(app, field)
                 />
                 <span class="unit">{limit.unit}</span>

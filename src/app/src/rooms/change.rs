@@ -1,8 +1,12 @@
 //! Trying a change: the answer, the chart that moves with it, what it costs, the steppers, and the writing.
 
+use std::cell::Cell;
+use std::rc::Rc;
+
 use bedside::Caution;
 use case::{Control, EntryKind, Settings};
 use leptos::prelude::*;
+use send_wrapper::SendWrapper;
 
 use crate::device::{clock, page};
 use crate::parts::buttons::{main_button, press};
@@ -30,39 +34,41 @@ const VOLUME_STEP_ML: f64 = 10.0;
 
 /// The room.
 pub fn change(app: App) -> AnyView {
-    let picture = Memo::new(move |_| {
-        app.trial.with(|trial| picture(app, trial.as_ref()?))
-    });
     let at = RwSignal::new(0);
-    let heed = Memo::new(move |_| app.trial.with(|trial| trial.as_ref().map(|t| heeded(app, t)).unwrap_or_default()));
+    let heed = move || app.trial.with(|trial| trial.as_ref().map(|t| heeded(app, t)).unwrap_or_default());
     let answered = move || app.trial.with(|trial| trial.as_ref().map_or_else(nothing_yet, answer));
     let costs = move || app.trial.with(|trial| trial.as_ref().map(price).unwrap_or_default());
     let there = move || app.trial.with(Option::is_some);
     let changed = move || app.trial.with(|t| t.as_ref().is_some_and(|t| !t.change.is_empty()));
+    let dock = move || if changed() { "dock dock-change" } else { "dock dock-change dock-idle" };
     say_after_a_pause(app);
     view! {
         <div class="scroll change">
             <section class="answer" inner_html=move || answered()></section>
-            <div class="chart-side">{drawing(picture, at)}</div>
+            <div class="chart-side">{drawing(app, picture, at)}</div>
             <section class="change-side">
-                <div inner_html=move || heed.get()></div>
+                <div inner_html=move || heed()></div>
                 <div inner_html=move || costs()></div>
                 <button type="button" class="plain" hidden=move || !changed() on:click=press(move || undo(app))>
                     {words::UNDO}
                 </button>
-                {reading(picture, at)}
+                {reading(app, picture, at)}
             </section>
         </div>
-        <div class="dock dock-change" hidden=move || !there()>
+        <div class=move || dock() hidden=move || !there()>
             <div class="steppers">{steppers(app)}</div>
             {main_button(app, label, more, write)}
-            {keypad(app, move || next(app))}
+            {keypad(app, next)}
         </div>
     }
     .into_any()
 }
 
-fn picture(app: App, trial: &Trial) -> Option<Picture> {
+fn picture(app: App) -> Option<Picture> {
+    app.trial.with(|trial| pictured(app, trial.as_ref()?))
+}
+
+fn pictured(app: App, trial: &Trial) -> Option<Picture> {
     let forecast = outlook::value(&trial.answer)?;
     let compared = app.present.with(|present| {
         let unchanged = present.as_ref().filter(|_| !trial.change.is_empty())?;
@@ -91,10 +97,10 @@ fn answer(trial: &Trial) -> String {
 
 /// What to heed: the answer's cautions, and the broken limits of an offer with the same change.
 fn heeded(app: App, trial: &Trial) -> String {
-    let mut all: Vec<Caution> = app.study.with(|study| {
-        let offers = study.as_ref().and_then(|study| study.offers(&trial.now).value);
-        let same = offers.and_then(|all| all.offers.into_iter().find(|offer| offer.change == trial.change));
-        same.map(|offer| offer.cautions).unwrap_or_default()
+    let mut all: Vec<Caution> = app.present.with(|present| {
+        let offers = present.as_ref().and_then(|present| present.offers.as_ref());
+        let same = offers.and_then(|all| all.offers.iter().find(|offer| offer.change == trial.change));
+        same.map(|offer| offer.cautions.clone()).unwrap_or_default()
     });
     for caution in &trial.answer.cautions {
         if !all.contains(caution) {
@@ -118,8 +124,8 @@ fn price(trial: &Trial) -> String {
             Some(value) => (said("b", "", &value) + " ", words::PRICE_UNITS[place]),
             None => (String::new(), words::PRICE_MISSING[place]),
         };
-        let inner = said("dt", "", words::PRICE[place])
-            + &element("dd", "", &(value + &said("small", "", unit)));
+        let inner =
+            said("dt", "", words::PRICE[place]) + &element("dd", "", &(value + &said("small", "", unit)));
         cells += &element("div", "price", &inner);
     }
     element("dl", "prices", &cells)
@@ -127,14 +133,17 @@ fn price(trial: &Trial) -> String {
 
 /// The steppers of what is set: drawn anew only when that changes.
 fn steppers(app: App) -> AnyView {
-    let old = Memo::new(move |_| {
+    let set = move || {
         app.trial.with(|trial| {
             let trial = trial.as_ref()?;
             Some((trial.in_force.rate_per_min, trial.set_volume(), trial.in_force.control))
         })
-    });
+    };
+    let known =
+        Memo::new(move |_| set().map(|(rate, volume, _)| words::known(rate, volume)).unwrap_or_default());
     let all = move || {
-        let Some((rate, volume, control)) = old.get() else { return ().into_any() };
+        known.with(|_| ());
+        let Some((rate, volume, control)) = untrack(set) else { return ().into_any() };
         let mut all = vec![];
         if let Some(old) = rate {
             all.push(stepper(app, Steps { field: Field::NewRate, old, by: 1.0 }, next));
@@ -208,12 +217,8 @@ fn write(app: App) {
 
 /// One polite sentence, a little after the last step.
 fn say_after_a_pause(app: App) {
-    let timer = StoredValue::new(None::<TimeoutHandle>);
-    let stop = move || {
-        if let Some(timer) = timer.try_update_value(Option::take).flatten() {
-            timer.clear();
-        }
-    };
+    let timer = Rc::new(Cell::new(None::<TimeoutHandle>));
+    let (pending, gone) = (Rc::clone(&timer), SendWrapper::new(timer));
     Effect::new(move |before: Option<Settings>| {
         let (change, said) = app.trial.with(|trial| {
             let change = trial.as_ref().map(|t| t.change).unwrap_or_default();
@@ -221,10 +226,16 @@ fn say_after_a_pause(app: App) {
             (change, said.unwrap_or_default())
         });
         if before.is_some_and(|before| before != change) && !change.is_empty() {
-            stop();
-            timer.set_value(clock::after(SAID_AFTER_MS, move || app.tell(&said)));
+            stop(&pending);
+            pending.set(clock::after(SAID_AFTER_MS, move || app.tell(&said)));
         }
         change
     });
-    on_cleanup(stop);
+    on_cleanup(move || stop(&gone));
+}
+
+fn stop(timer: &Cell<Option<TimeoutHandle>>) {
+    if let Some(timer) = timer.take() {
+        timer.clear();
+    }
 }

@@ -16,13 +16,8 @@ use crate::state::rows::gas_rows;
 use crate::state::writing;
 use crate::words::form as words;
 
-const FORM: Form = Form {
-    rows: |app| app.sheet.with(gas_rows),
-    hint: |_, _| None,
-    ask: questions,
-    mend: Field::Ph,
-    press,
-};
+const FORM: Form =
+    Form { rows: |app| app.sheet.with(gas_rows), hint: |_, _| None, ask: questions, mend: Field::Ph, press };
 
 /// The room.
 pub fn gas(app: App) -> AnyView {
@@ -37,7 +32,7 @@ pub fn gas(app: App) -> AnyView {
         <div class="scroll form">{form(app, FORM)}</div>
         <div class="dock">
             <div class="dock-buttons">{perhaps(other)} {main_button(app, label, more, press)}</div>
-            {keypad(app, move || next(app, FORM))}
+            {keypad(app, |app| next(app, FORM))}
         </div>
     }
     .into_any()

@@ -22,18 +22,12 @@ const CHART_HEIGHT: f64 = 300.0;
 
 /// The room.
 pub fn now(app: App) -> AnyView {
-    let picture = Memo::new(move |_| {
-        app.present.with(|present| {
-            let present = present.as_ref()?;
-            let case = app.case();
-            Picture::new(present.shown()?, None, &case, &present.now, CHART_HEIGHT, present.is_stale())
-        })
-    });
     let at = RwSignal::new(0);
     let moving = Memo::new(move |_| app.present.with(|p| p.as_ref().is_some_and(Present::moves)));
     let middle = move || {
         let mut both = vec![
-            view! { <div class="chart-side">{drawing(picture, at)} {reading(picture, at)}</div> }.into_any(),
+            view! { <div class="chart-side">{drawing(app, picture, at)} {reading(app, picture, at)}</div> }
+                .into_any(),
             offers::offers(app),
         ];
         if !moving.get() {
@@ -41,10 +35,8 @@ pub fn now(app: App) -> AnyView {
         }
         both.into_any()
     };
-    let next = Memo::new(move |_| Next::of(app));
-    let gas = move || {
-        perhaps((next.get() != Next::TypeGas).then(|| link(words::NEXT_GAS.to_owned(), Room::Gas.hash())))
-    };
+    let other = Memo::new(move |_| Next::of(app) != Next::TypeGas);
+    let gas = move || perhaps(other.get().then(|| link(words::NEXT_GAS.to_owned(), Room::Gas.hash())));
     view! {
         <div class="scroll now">
             {answer::answer(app)}
@@ -63,6 +55,14 @@ pub fn now(app: App) -> AnyView {
         </div>
     }
     .into_any()
+}
+
+fn picture(app: App) -> Option<Picture> {
+    let case = app.case();
+    app.present.with(|present| {
+        let present = present.as_ref()?;
+        Picture::new(present.shown()?, None, &case, &present.now, CHART_HEIGHT, present.is_stale())
+    })
 }
 
 /// The next action, named by the state of the case.

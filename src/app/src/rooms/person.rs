@@ -37,7 +37,7 @@ pub fn person(app: App) -> AnyView {
             {others(app)}
             {readiness(app)}
         </div>
-        <div class="dock">{perhaps(save)} {keypad(app, move || next(app, FORM))}</div>
+        <div class="dock">{perhaps(save)} {keypad(app, |app| next(app, FORM))}</div>
     }
     .into_any()
 }
@@ -103,7 +103,8 @@ fn others(app: App) -> AnyView {
             page::go(Room::Now.hash());
         }));
     }
-    let heading = (!ways.is_empty()).then(|| view! { <h2 class="form-heading">{words::OTHERS}</h2> }.into_any());
+    let heading =
+        (!ways.is_empty()).then(|| view! { <h2 class="form-heading">{words::OTHERS}</h2> }.into_any());
     ways.push(plain(words::NEW_CASE.to_owned(), move || new_case(app)));
     ways.push(link(words::CAUTIONS.to_owned(), Room::Start.hash()));
     view! {

@@ -30,7 +30,7 @@ pub fn settings(app: App) -> AnyView {
         <div class="scroll form">{form(app, FORM)}</div>
         <div class="dock">
             {main_button(app, label, |app| app.still(), press)}
-            {keypad(app, move || next(app, FORM))}
+            {keypad(app, |app| next(app, FORM))}
         </div>
     }
     .into_any()
@@ -63,14 +63,14 @@ fn press(app: App) {
         .with_untracked(|sheet| (sheet.moment(Choice::Drawn, &now), sheet.moment(Choice::Changed, &now)));
     let gas = untrack(|| app.sheet.with(|sheet| writing::gas(sheet, app.group(), None)));
     if untrack(|| gas_is_typed(app)) && (gas.is_none() || drawn.is_none()) {
-        app.trouble.set(Some(words::GAS_UNFINISHED.to_owned()));
+        app.trouble.set(words::GAS_UNFINISHED.to_owned());
         page::go(Room::Gas.hash());
         return;
     }
     let settings = untrack(|| typed(app));
     let gas = drawn.zip(gas);
     if settings.is_empty() && gas.is_none() {
-        app.trouble.set(Some(words::NOTHING_TYPED.to_owned()));
+        app.trouble.set(words::NOTHING_TYPED.to_owned());
         return;
     }
     // The first settings stood when the gas was drawn; Now asks how long they had been held by then.

@@ -15,8 +15,8 @@ use crate::words::{person, start as words};
 pub fn start(app: App) -> AnyView {
     let cautions: String = words::CAUTIONS.iter().map(|line| said("p", "", line)).collect();
     let not_for: String = words::NOT_FOR_LIST.iter().map(|line| said("li", "", line)).collect();
-    let another =
-        untrack(|| app.open.with(Option::is_some)).then(|| plain(person::NEW_CASE.to_owned(), move || new_case(app)));
+    let another = untrack(|| app.open.with(Option::is_some))
+        .then(|| plain(person::NEW_CASE.to_owned(), move || new_case(app)));
     view! {
         <div class="scroll start">
             <p class="lead">{words::JOB}</p>

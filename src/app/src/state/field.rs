@@ -147,10 +147,15 @@ impl Field {
             Field::Hco3 => plain("hco3", ids!("f-hco3"), Q::Hco3MmolL, Some("HCO₃ printed")),
             Field::Hb => plain("hb", ids!("f-hb"), Q::HbGDl, None),
             Field::ChangedClock => clock("changed_clock", ids!("f-changed"), "Changed at"),
-            Field::TidalVolume => plain("tidal_volume", ids!("f-vt"), Q::TidalVolumeMl, Some("Tidal volume, set")),
-            Field::ExpiredVolume => {
-                plain("expired_volume", ids!("f-vte"), Q::TidalVolumeMl, Some("Tidal volume, expired, read off"))
+            Field::TidalVolume => {
+                plain("tidal_volume", ids!("f-vt"), Q::TidalVolumeMl, Some("Tidal volume, set"))
             }
+            Field::ExpiredVolume => plain(
+                "expired_volume",
+                ids!("f-vte"),
+                Q::TidalVolumeMl,
+                Some("Tidal volume, expired, read off"),
+            ),
             Field::Rate => plain("rate", ids!("f-rate"), Q::RatePerMin, Some("Rate, set")),
             Field::TotalRate => {
                 plain("total_rate", ids!("f-total"), Q::RatePerMin, Some("Rate in all, own breaths counted"))
@@ -159,9 +164,12 @@ impl Field {
             Field::Plateau => plain("plateau", ids!("f-plateau"), Q::PlateauCmh2o, None),
             Field::Fio2 => plain("fio2", ids!("f-fio2"), Q::Fio2, None),
             Field::InspiratoryTime => plain("inspiratory_time", ids!("f-ti"), Q::InspiratoryTimeS, None),
-            Field::MinuteVolume => {
-                plain("minute_volume", ids!("f-mv"), Q::MinuteVolumeLMin, Some("Minute volume, expired, read off"))
-            }
+            Field::MinuteVolume => plain(
+                "minute_volume",
+                ids!("f-mv"),
+                Q::MinuteVolumeLMin,
+                Some("Minute volume, expired, read off"),
+            ),
             Field::InspiratoryPressure => plain(
                 "inspiratory_pressure",
                 ids!("f-pinsp"),

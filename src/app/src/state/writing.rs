@@ -140,8 +140,10 @@ pub fn try_settings(sheet: &mut Sheet, tried: &str) {
 /// The address at which `change` is tried.
 pub fn address_of(change: &Settings) -> String {
     let part = |name: &str, value: Option<f64>| value.map(|value| format!("{name}={value}"));
-    let parts: Vec<String> =
-        [part("rate", change.rate_per_min), part("vt", change.tidal_volume_ml)].into_iter().flatten().collect();
+    let parts: Vec<String> = [part("rate", change.rate_per_min), part("vt", change.tidal_volume_ml)]
+        .into_iter()
+        .flatten()
+        .collect();
     format!("{}?{}", Room::Change.hash(), parts.join("&"))
 }
 
@@ -164,8 +166,11 @@ pub fn offer_person(sheet: &mut Sheet, case: &case::Case) {
     }
     let person = &case.person;
     sheet.set_text(Field::Label, case.label.as_str());
-    let numbers =
-        [(Field::Age, person.age_years), (Field::Height, person.height_cm), (Field::Weight, person.weight_kg)];
+    let numbers = [
+        (Field::Age, person.age_years),
+        (Field::Height, person.height_cm),
+        (Field::Weight, person.weight_kg),
+    ];
     for (field, value) in numbers {
         sheet.set_text(field, value.map(|value| format!("{value}")).unwrap_or_default());
     }

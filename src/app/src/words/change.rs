@@ -28,6 +28,11 @@ pub const STEP_FIRST: &str = "Change the rate or the volume first.";
 pub fn was(value: f64) -> String {
     format!("now {}", as_typed(value))
 }
+/// What is set, in short: the steppers are drawn anew when it is something else.
+pub fn known(rate: Option<f64>, volume: Option<f64>) -> String {
+    let words = |value: Option<f64>| value.map_or_else(|| "not set".to_owned(), as_typed);
+    format!("{}, {}", words(rate), words(volume))
+}
 /// One less.
 pub fn less(label: &str) -> String {
     format!("{label} down")

@@ -186,11 +186,8 @@ pub fn assumed(item: &bedside::Assumed) -> String {
     let size = if item.spread > 0.0 { item.spread } else { item.value / 10.0 };
     let decimals = if size < 0.3 { 2 } else { usize::from(size < 3.0) };
     let unit = if item.unit.is_empty() { String::new() } else { format!(" {}", item.unit) };
-    let spread = if item.spread > 0.0 {
-        format!(" ± {}", number(item.spread, decimals))
-    } else {
-        String::new()
-    };
+    let spread =
+        if item.spread > 0.0 { format!(" ± {}", number(item.spread, decimals)) } else { String::new() };
     format!("{}: {}{spread}{unit} assumed", item.name, number(item.value, decimals))
 }
 

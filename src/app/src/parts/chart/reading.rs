@@ -2,25 +2,24 @@
 
 use leptos::prelude::*;
 
-use super::Picture;
+use super::{Picture, Source};
 use crate::device::page;
 use crate::parts::html::{element, said, tag};
+use crate::state::app::App;
 use crate::words::now as words;
 use crate::words::spoken::spoken;
 use crate::words::values::{about, paco2_range, ph_range};
 
 /// A native slider over the chart's times.
-pub fn slider(picture: Memo<Option<Picture>>, at: RwSignal<usize>) -> AnyView {
+pub fn slider(app: App, picture: Source, at: RwSignal<usize>) -> AnyView {
     let point = move || {
-        picture.with(|picture| {
-            let picture = picture.as_ref()?;
-            let minute = *picture.listed().get(at.get())?;
-            let (paco2, _) = picture.point(minute)?;
-            Some(words::chart::point(&picture.clock(minute), &paco2))
-        })
+        let picture = picture(app)?;
+        let minute = *picture.listed().get(at.get())?;
+        let (paco2, _) = picture.point(minute)?;
+        Some(words::chart::point(&picture.clock(minute), &paco2))
     };
-    let last = move || picture.with(|p| p.as_ref().map_or(0, |p| p.listed().len().saturating_sub(1)));
-    let moved = move |event: web_sys::Event| {
+    let last = move || picture(app).map_or(0, |picture| picture.listed().len().saturating_sub(1));
+    let moved = move |event: leptos::ev::Event| {
         if let Some(place) = page::input(&event).and_then(|input| input.value().parse().ok()) {
             at.set(place);
         }
@@ -46,8 +45,8 @@ pub fn slider(picture: Memo<Option<Picture>>, at: RwSignal<usize>) -> AnyView {
 }
 
 /// The same numbers as a table.
-pub fn table(picture: Memo<Option<Picture>>) -> AnyView {
-    let html = move || picture.with(|picture| picture.as_ref().map(rows).unwrap_or_default());
+pub fn table(app: App, picture: Source) -> AnyView {
+    let html = move || picture(app).as_ref().map(rows).unwrap_or_default();
     view! {
         <details class="numbers">
             <summary>{words::NUMBERS}</summary>
@@ -76,8 +75,7 @@ fn rows(picture: &Picture) -> String {
             body += &element("tr", "", &cells);
         }
     }
-    let heads: String =
-        words::chart::HEADS.iter().map(|head| tag("th", &[("scope", "col")], head)).collect();
+    let heads: String = words::chart::HEADS.iter().map(|head| tag("th", &[("scope", "col")], head)).collect();
     let head = element("thead", "", &element("tr", "", &heads));
     element("table", "", &(head + &element("tbody", "", &body)))
 }

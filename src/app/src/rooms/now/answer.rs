@@ -51,14 +51,17 @@ fn html(present: Option<&Present>, gas: Option<(Gas, Moment)>) -> String {
     let numbers = numbers(present);
     let answer = if numbers.is_empty() {
         let gas = gas.map(|(gas, at)| said("p", "lead", &words::last_gas(&gas, at, now)));
-        let ratio = present.ratio.map(|ratio| {
-            said("p", "sentence", &words::ratio(ratio.minute_volume_factor, &ratio.paco2_mmhg))
-        });
+        let ratio = present
+            .ratio
+            .map(|ratio| said("p", "sentence", &words::ratio(ratio.minute_volume_factor, &ratio.paco2_mmhg)));
         gas.unwrap_or_default() + &ratio.unwrap_or_default()
     } else {
         numbers
     };
-    answer + &cautions::standing(&present.answer.standing) + &cautions::cautions(&present.cautions)
+    // A gas that does not fit is asked about right below, with its three answers.
+    let standing =
+        if present.doubt.is_some() { String::new() } else { cautions::standing(&present.answer.standing) };
+    answer + &standing + &cautions::cautions(&present.cautions)
 }
 
 /// The two numbers and the sentence; empty where there is no forecast.
@@ -66,8 +69,9 @@ fn numbers(present: &Present) -> String {
     let Some(forecast) = present.shown() else { return String::new() };
     let Some((paco2, ph)) = outlook::at(forecast, 0.0) else { return String::new() };
     let now = &present.now;
-    let figures = figure(words::PACO2_NOW, &about(paco2.p50, 0), words::MMHG, &in_words(&paco2_range(&paco2)))
-        + &figure(words::PH_NOW, &about(ph.p50, 2), "", &ph_range(&ph));
+    let figures =
+        figure(words::PACO2_NOW, &about(paco2.p50, 0), words::MMHG, &in_words(&paco2_range(&paco2)))
+            + &figure(words::PH_NOW, &about(ph.p50, 2), "", &ph_range(&ph));
     let sentence = format!(
         "{} {}",
         words::heading(paco2.p50, forecast),

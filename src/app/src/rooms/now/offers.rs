@@ -5,7 +5,7 @@ use leptos::prelude::*;
 
 use super::words;
 use crate::parts::cautions::cautions;
-use crate::parts::html::{element, said};
+use crate::parts::html::{element, said, tag};
 use crate::state::app::App;
 use crate::state::writing::address_of;
 use crate::words::spoken::spoken;
@@ -16,32 +16,23 @@ const MOST: usize = 3;
 
 /// The offers, while the forecast is shown.
 pub fn offers(app: App) -> AnyView {
-    let offers = Memo::new(move |_| {
-        app.study.with(|study| app.present.with(|present| present.as_ref()?.offers(study.as_ref()?)))
-    });
-    let one = move |place: usize| offers.with(|all| all.as_ref().and_then(|all| all.offers.get(place).cloned()));
-    let count = move || offers.with(|all| all.as_ref().map_or(0, |all| all.offers.len()));
-    let fewer = move || offers.with(|all| all.as_ref().map(because).unwrap_or_default());
+    let one = move |place: usize| of(app, |all| all.offers.get(place).cloned());
+    let count = move || of(app, |all| all.offers.len());
+    let fewer = move || of(app, because);
     let own = move |offer: &Offer| {
-        let shared = offers.with(|all| all.as_ref().map(shared).unwrap_or_default());
+        let shared = of(app, shared);
         offer.cautions.iter().filter(|caution| !shared.contains(caution)).cloned().collect::<Vec<_>>()
     };
     let mut rows = vec![];
     // Three links that stay while their words change, so that the focus on one is not lost each minute.
     for place in 0..MOST {
         let words = move || one(place).map(|offer| html(&offer)).unwrap_or_default();
-        let name = move || one(place).map(|offer| name(&offer)).unwrap_or_default();
         let address = move || one(place).map(|offer| address_of(&offer.change)).unwrap_or_default();
         let heed = move || one(place).map(|offer| cautions(&own(&offer))).unwrap_or_default();
         rows.push(
             view! {
                 <li hidden=move || one(place).is_none()>
-                    <a
-                        class="offer"
-                        href=move || address()
-                        aria-label=move || name()
-                        inner_html=move || words()
-                    ></a>
+                    <a class="offer" href=move || address() inner_html=move || words()></a>
                     <div inner_html=move || heed()></div>
                 </li>
             }
@@ -60,6 +51,11 @@ pub fn offers(app: App) -> AnyView {
         </section>
     }
     .into_any()
+}
+
+/// Something of the offers, or nothing where there are none.
+fn of<T: Default>(app: App, what: impl Fn(&Offers) -> T) -> T {
+    app.present.with(|present| present.as_ref().and_then(|p| p.offers.as_ref()).map(what)).unwrap_or_default()
 }
 
 /// What to heed with every one of them is said once.
@@ -92,8 +88,11 @@ fn html(offer: &Offer) -> String {
         let inner = said("span", "offer-name", name) + &said("b", "", value) + &said("small", "", band);
         element("span", "offer-figure", &inner)
     };
-    said("b", "offer-what", &words::offer(&offer.change))
+    let seen = said("b", "offer-what", &words::offer(&offer.change))
         + &figure("PaCO₂ ", &about(settled.paco2_mmhg.p50, 0), &paco2_range(&settled.paco2_mmhg))
         + &figure("pH ", &about(settled.ph.p50, 2), &ph_range(&settled.ph))
-        + &said("small", "offer-price", &words::price(&offer.price))
+        + &said("small", "offer-price", &words::price(&offer.price));
+    // Read as one sentence, seen as a row of a table.
+    said("span", "unseen", &name(offer))
+        + &tag("span", &[("class", "offer-row"), ("aria-hidden", "true")], &seen)
 }
