@@ -44,6 +44,14 @@ pub struct Caution {
     pub source: Option<&'static str>,
 }
 
+impl Caution {
+    /// Whether it says that this change could hurt or breaks a limit: it then stands over the answer.
+    #[must_use]
+    pub fn comes_first(&self) -> bool {
+        matches!(self.id, "obstruction_rate" | "metabolic_less" | "plateau" | "rate" | "ml_per_kg")
+    }
+}
+
 /// Something taken for granted because nobody measured it.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Assumed {

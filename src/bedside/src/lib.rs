@@ -17,4 +17,4 @@ pub use ask::{Question, QuestionKind, ask_about_entry};
 pub use forecast::{Band, Forecast, Quantiles, Ratio, Settled};
 pub use offer::{Offer, Offers, Price};
 pub use study::{Doubt, Freshness, HORIZON_MIN, Options, Study};
-pub use summary::{Anchor, Members, members_at, reading_95, summarise};
+pub use summary::{Anchor, Members, PACO2_READ_WITHIN, members_at, reading_95, summarise};

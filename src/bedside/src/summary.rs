@@ -22,6 +22,12 @@ const ERROR_NODES: [(f64, f64); 5] = [
     (2.856_970_013_872_806, 0.011_257_411_327_720_7),
 ];
 
+/// The normal quantile of 90 %: eight in ten lie within as many standard deviations.
+const EIGHT_IN_TEN: f64 = 1.281_551_565_544_600_4;
+
+/// Eight times in ten an analyser reads PaCO2 within this share of the truth.
+pub const PACO2_READ_WITHIN: f64 = EIGHT_IN_TEN * s::ANALYSER_PACO2.spread;
+
 /// The share of the way after which "90 %" is reached.
 const NINETY_PERCENT: f64 = 0.9;
 

@@ -3,7 +3,7 @@
 mod picture;
 mod reading;
 
-use bedside::{Forecast, Quantiles};
+use bedside::{Forecast, PACO2_READ_WITHIN, Quantiles};
 use case::{Case, Now};
 use leptos::prelude::*;
 
@@ -42,9 +42,6 @@ struct Mark {
     error_mmhg: f64,
 }
 
-/// Eight times in ten an analyser reads PaCO2 within this share of the truth: 1.28 standard deviations of
-/// 3 %, assumed as long as the analyser's own is not known.
-const GAS_ERROR: f64 = 1.28 * 0.03;
 /// The chart begins at least so many minutes before now.
 const LEAST_BACK_MIN: f64 = 10.0;
 
@@ -70,7 +67,7 @@ impl Picture {
         for (_, at, gas) in case.gases() {
             let minute = at.minutes_since(now.wall);
             if minute >= from && minute <= to {
-                let error_mmhg = gas.pco2_mmhg * GAS_ERROR;
+                let error_mmhg = gas.pco2_mmhg * PACO2_READ_WITHIN;
                 values.extend([gas.pco2_mmhg - error_mmhg, gas.pco2_mmhg + error_mmhg]);
                 gases.push(Mark { minute, mmhg: gas.pco2_mmhg, error_mmhg });
             }

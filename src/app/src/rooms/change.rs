@@ -26,7 +26,7 @@ use crate::words::now::{MMHG, when_settled};
 use crate::words::values::{about, in_words, number, paco2_range, ph_range};
 
 /// Height of the chart, in its own units: the keys must find room under it.
-const CHART_HEIGHT: f64 = 236.0;
+const CHART_HEIGHT: f64 = 176.0;
 /// A change is said this long after the last step.
 const SAID_AFTER_MS: u64 = 700;
 /// Millilitres of one step of the tidal volume.
@@ -35,7 +35,9 @@ const VOLUME_STEP_ML: f64 = 10.0;
 /// The room.
 pub fn change(app: App) -> AnyView {
     let at = RwSignal::new(0);
-    let heed = move || app.trial.with(|trial| trial.as_ref().map(|t| heeded(app, t)).unwrap_or_default());
+    let heed = move |first: bool| {
+        app.trial.with(|trial| trial.as_ref().map(|t| heeded(app, t, first)).unwrap_or_default())
+    };
     let answered = move || app.trial.with(|trial| trial.as_ref().map_or_else(nothing_yet, answer));
     let costs = move || app.trial.with(|trial| trial.as_ref().map(price).unwrap_or_default());
     let there = move || app.trial.with(Option::is_some);
@@ -44,11 +46,11 @@ pub fn change(app: App) -> AnyView {
     say_after_a_pause(app);
     view! {
         <div class="scroll change">
-            <section class="answer" inner_html=move || answered()></section>
+            <section class="answer" inner_html=move || heed(true) + &answered()></section>
             <div class="chart-side">{drawing(app, picture, at)}</div>
             <section class="change-side">
-                <div inner_html=move || heed()></div>
                 <div inner_html=move || costs()></div>
+                <div inner_html=move || heed(false)></div>
                 <button type="button" class="plain" hidden=move || !changed() on:click=press(move || undo(app))>
                     {words::UNDO}
                 </button>
@@ -95,8 +97,9 @@ fn answer(trial: &Trial) -> String {
     element("div", "figures", &figures) + &said("p", "sentence", &when) + &standing
 }
 
-/// What to heed: the answer's cautions, and the broken limits of an offer with the same change.
-fn heeded(app: App, trial: &Trial) -> String {
+/// What to heed: the answer's cautions, and the broken limits of an offer with the same change. Dangers and broken
+/// limits come `first`, over the answer; the rest stands under the price.
+fn heeded(app: App, trial: &Trial, first: bool) -> String {
     let mut all: Vec<Caution> = app.present.with(|present| {
         let offers = present.as_ref().and_then(|present| present.offers.as_ref());
         let same = offers.and_then(|all| all.offers.iter().find(|offer| offer.change == trial.change));
@@ -107,13 +110,13 @@ fn heeded(app: App, trial: &Trial) -> String {
             all.push(caution.clone());
         }
     }
+    all.retain(|caution| caution.comes_first() == first);
     cautions::cautions(&all)
 }
 
 fn price(trial: &Trial) -> String {
     let Some(price) = trial.price else { return String::new() };
     let values = [
-        Some(number(price.rate_per_min, 0)),
         price.ml_per_kg.map(|value| number(value, 1)),
         price.plateau_cmh2o.map(|value| number(value, 0)),
         Some(number(price.minute_volume_l_min, 1)),

@@ -59,11 +59,11 @@ pub fn compared(settings: &Settings, change: &Settings) -> String {
     format!("if {}", parts.join(", "))
 }
 /// Price headings.
-pub const PRICE: [&str; 4] = ["rate", "volume", "plateau", "minute volume"];
+pub const PRICE: [&str; 3] = ["volume", "plateau", "minute volume"];
 /// Units under the prices.
-pub const PRICE_UNITS: [&str; 4] = ["/min", "mL/kg", "cmH₂O", "L/min"];
+pub const PRICE_UNITS: [&str; 3] = ["mL/kg", "cmH₂O", "L/min"];
 /// What stands there while a price isn't known.
-pub const PRICE_MISSING: [&str; 4] = ["", "height not known", "not typed", ""];
+pub const PRICE_MISSING: [&str; 3] = ["height not known", "not typed", ""];
 
 /// The answer in one sentence, said 700 ms after the last step.
 pub fn said(change: &Settings, forecast: &Forecast) -> String {
