@@ -1,4 +1,4 @@
-//! Every figure is used, and a figure's spread is used where it has one.
+//! Every figure is used.
 
 use crate::source::rust_files;
 use crate::tokens::of;

@@ -48,7 +48,10 @@ impl Caution {
     /// Whether it says that this change could hurt or breaks a limit: it then stands over the answer.
     #[must_use]
     pub fn comes_first(&self) -> bool {
-        matches!(self.id, "obstruction_rate" | "metabolic_less" | "plateau" | "rate" | "ml_per_kg")
+        matches!(
+            self.id,
+            "relaxant" | "obstruction_rate" | "metabolic_less" | "plateau" | "rate" | "ml_per_kg"
+        )
     }
 }
 

@@ -1,6 +1,6 @@
 //! Slips of the hand: asked, never corrected.
 
-use case::{Case, EntryKind, Gas, Settings, Site};
+use case::{Case, Effort, EntryKind, Gas, Settings, Site};
 use physiology::hco3_mmol_l;
 use sources as s;
 use units::{Kpa, Mmhg};
@@ -43,6 +43,7 @@ pub fn ask_about_entry(case: &Case, kind: &EntryKind) -> Vec<Question> {
     match kind {
         EntryKind::Gas(gas) => about_gas(case, gas),
         EntryKind::Settings(change) => about_settings(case, change),
+        EntryKind::Sedation(sedation) if sedation.relaxant == Some(true) => about_relaxant(case),
         EntryKind::EndTidal(reading) => about_end_tidal(case, reading.etco2_mmhg),
         _ => vec![],
     }
@@ -93,6 +94,23 @@ fn about_settings(case: &Case, change: &Settings) -> Vec<Question> {
         }
     }
     questions
+}
+
+/// A relaxant takes the patient's own breaths.
+fn about_relaxant(case: &Case) -> Vec<Question> {
+    let steps = case.settings_steps();
+    let Some((_, settings)) = steps.last() else { return vec![] };
+    let own = settings.rate_total_per_min.zip(settings.rate_per_min).map(|(total, set)| total - set);
+    let words = match own {
+        Some(own) if own > 0.0 => {
+            format!("He takes {own:.0} breaths of his own. Relaxed, they stop. Raise the rate first.")
+        }
+        _ if settings.effort == Some(Effort::Present) => {
+            "He breathes himself. Relaxed, those breaths stop. Raise the rate first.".to_owned()
+        }
+        _ => return vec![],
+    };
+    vec![Question { id: "relaxant", kind: QuestionKind::Unusual, words }]
 }
 
 fn about_end_tidal(case: &Case, etco2_mmhg: f64) -> Vec<Question> {

@@ -1,7 +1,8 @@
 //! What to heed, the most dangerous first. Words are short, plain, and say what to do.
 
-use case::{Condition, Control, EntryKind, Now, Settings};
+use case::{Condition, Control, Effort, EntryKind, Now, Settings};
 use sources as s;
+use units::{Kpa, Mmhg};
 
 use crate::Caution;
 use crate::offer::{Price, price};
@@ -47,6 +48,22 @@ fn gas_cautions(study: &Study, learnt: &Learnt, all: &mut Vec<Caution>) {
     let gas = &learnt.last_gas;
     if gas.ph < s::CALL_PH.value {
         all.push(caution("call", format!("pH {:.2}: call for help now.", gas.ph), Some(&s::CALL_PH)));
+    }
+    if learnt.surprise.abs() > s::SURPRISE.value {
+        let seldom = if learnt.surprise > 0.0 { "high" } else { "low" };
+        let words =
+            format!("The first PaCO₂ is unusually {seldom} for these settings. Check gas, rate and volume.");
+        all.push(caution("surprise", words, Some(&s::SURPRISE)));
+    }
+    if gas.pco2_mmhg <= s::KPA_LIKELY_MOST.value {
+        let kpa = Mmhg::from(Kpa(gas.pco2_mmhg)).0;
+        let words = format!("PaCO₂ {} is taken as mmHg. In kPa it would be {kpa:.0} mmHg.", gas.pco2_mmhg);
+        all.push(caution("unit", words, Some(&s::KPA_LIKELY_MOST)));
+    }
+    if study.history.measured().without_spread {
+        let words =
+            "Measured values are taken as exact, so gases are not learnt from. For comparing models only.";
+        all.push(caution("exact", words, None));
     }
     if retainer_unanswered(study, learnt) {
         all.push(caution(
@@ -105,8 +122,11 @@ fn record_cautions(study: &Study, all: &mut Vec<Caution>) {
             None,
         ));
     }
-    let not_understood = count(|k| matches!(k, EntryKind::NotUnderstood(_)))
-        + study.history.entries.iter().filter(|e| !e.not_understood.is_empty()).count();
+    let unknown = |k: &EntryKind| {
+        matches!(k, EntryKind::NotUnderstood(_) | EntryKind::Condition { name: Condition::Other(_), .. })
+    };
+    let not_understood =
+        count(unknown) + study.history.entries.iter().filter(|e| !e.not_understood.is_empty()).count();
     if not_understood > 0 {
         all.push(caution(
             "not_understood",
@@ -118,10 +138,11 @@ fn record_cautions(study: &Study, all: &mut Vec<Caution>) {
 
 /// Cautions that a change brings: what can kill, then broken limits, then what to look at.
 pub(crate) fn of_change(study: &Study, current: &Settings, change: &Settings) -> Vec<Caution> {
-    let Some(price) = price(&study.history.patient, current, change) else { return vec![] };
-    let mut all = dangers(study, current, &price);
-    all.extend(broken_limits(&price));
-    let faster = current.rate_per_min.is_some_and(|rate| price.rate_per_min > rate);
+    let planned = current.after(change);
+    let mut all = dangers(study, current, &planned);
+    let price = price(&study.history.patient, current, change);
+    all.extend(price.iter().flat_map(broken_limits));
+    let faster = matches!((current.rate_per_min, planned.rate_per_min), (Some(old), Some(new)) if new > old);
     if current.control == Some(Control::Volume) && faster {
         all.push(caution("check_trapping", "After a faster rate look: does flow come back to zero?", None));
     }
@@ -129,21 +150,41 @@ pub(crate) fn of_change(study: &Study, current: &Settings, change: &Settings) ->
 }
 
 /// What this change could do to this patient.
-pub(crate) fn dangers(study: &Study, current: &Settings, price: &Price) -> Vec<Caution> {
+fn dangers(study: &Study, current: &Settings, planned: &Settings) -> Vec<Caution> {
     let mut all = Vec::new();
-    let faster = current.rate_per_min.is_none_or(|rate| price.rate_per_min > rate);
-    if faster && study.history.has(|c| *c == Condition::AirflowObstruction) == Some(true) {
-        let words = "Airflow obstruction: more rate can raise PaCO₂ and stop the heart.";
+    if study.history.has(|c| *c == Condition::AirflowObstruction) == Some(true)
+        && traps_more(current, planned)
+    {
+        let words =
+            "Airflow obstruction: a faster, larger or longer breath can raise PaCO₂ and stop the heart.";
         all.push(caution("obstruction_rate", words, None));
     }
-    let less = current
-        .breath()
-        .is_some_and(|now| price.minute_volume_l_min < now.rate_per_min * now.tidal_volume_ml / 1000.0);
-    if less && study.learnt().is_some_and(|learnt| learnt.standard_be <= s::METABOLIC_SBE.value) {
+    let own = current.rate_total_per_min.zip(current.rate_per_min).map(|(total, set)| total - set);
+    let stilled = planned.effort == Some(Effort::None) && current.effort != Some(Effort::None);
+    if let Some(own) = own.filter(|own| stilled && *own > 0.0) {
+        let words =
+            format!("He takes {own:.0} breaths of his own. Relaxed, they stop. Raise the rate first.");
+        all.push(caution("relaxant", words, None));
+    }
+    let acidosis = study.learnt().is_some_and(|learnt| learnt.standard_be <= s::METABOLIC_SBE.value);
+    if acidosis && study.ventilates_less(current, planned) {
         let words = "Metabolic acidosis: less ventilation drops pH at once.";
         all.push(caution("metabolic_less", words, Some(&s::METABOLIC_SBE)));
     }
     all
+}
+
+/// Whether a change leaves less time, or more gas, to breathe out.
+fn traps_more(current: &Settings, planned: &Settings) -> bool {
+    let grew = |old: Option<f64>, new: Option<f64>| match (old, new) {
+        (Some(old), Some(new)) => new > old,
+        (None, new) => new.is_some(),
+        (Some(_), None) => false,
+    };
+    grew(current.rate_per_min, planned.rate_per_min)
+        || grew(current.tidal_volume_ml, planned.tidal_volume_ml)
+        || grew(current.inspiratory_time_s, planned.inspiratory_time_s)
+        || grew(current.inspiratory_pressure_cmh2o, planned.inspiratory_pressure_cmh2o)
 }
 
 /// Limits that settings would break.

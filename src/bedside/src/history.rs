@@ -7,7 +7,8 @@ use physiology::{Patient, SedationDepth, Step, production_factor};
 use sources as s;
 
 use crate::Standing;
-use crate::standing::{Way, breath, way, withheld};
+use crate::standing::{breath, withheld};
+use crate::stretch::{self, Stretch};
 
 /// A gas that may be learnt from.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -27,6 +28,8 @@ pub(crate) struct History {
     pub patient: Patient,
     /// Settings steps with the whole state.
     pub settings: Vec<(Moment, Settings)>,
+    /// The last stretch that can be computed.
+    pub stretch: Option<Stretch>,
     verdicts: Vec<(EntryId, GasChoice)>,
 }
 
@@ -39,7 +42,8 @@ impl History {
                 if let EntryKind::GasVerdict(v) = &e.kind { Some((v.of.clone(), v.choice)) } else { None }
             })
             .collect();
-        Self { patient: patient_of(case), settings: case.settings_steps(), verdicts, entries }
+        let stretch = stretch::last(&entries);
+        Self { patient: patient_of(case), settings: case.settings_steps(), stretch, verdicts, entries }
     }
 
     /// The settings in force at `moment`.
@@ -70,19 +74,10 @@ impl History {
             .collect()
     }
 
-    /// The moment from which the record can be computed without a gap: since then the breath is known (or was
-    /// read off a little after a change), nobody squeezed by hand, and the circulation was not lost.
+    /// The moment from which the record can be computed: the stretch's, or when the circulation is steady.
     pub fn computable_from(&self) -> Option<Moment> {
-        let mut from = None;
-        for (at, settings) in &self.settings {
-            match (breath(settings), from) {
-                (Some(_), None) => from = Some(*at),
-                (None, _) if !measurable(settings) => from = None,
-                _ => {}
-            }
-        }
         let steady = self.circulation_steady_from()?;
-        from.map(|from| if steady > from { steady } else { from })
+        self.stretch.as_ref().map(|stretch| if steady > stretch.from { steady } else { stretch.from })
     }
 
     /// When the circulation may be counted on: always, unless an entry says otherwise; `None` while it can't.
@@ -114,11 +109,11 @@ impl History {
             .next_back()
     }
 
-    /// Haemoglobin last measured by `moment`, g/dL.
+    /// Haemoglobin last measured by `moment`, g/dL; not from a sample that was left out.
     pub fn haemoglobin(&self, moment: Moment) -> Option<f64> {
         self.entries
             .iter()
-            .filter(|e| e.at <= moment)
+            .filter(|e| e.at <= moment && self.verdict(&e.id) != Some(GasChoice::Sample))
             .filter_map(|e| if let EntryKind::Gas(gas) = &e.kind { gas.hb_g_dl } else { None })
             .next_back()
     }
@@ -149,52 +144,92 @@ impl History {
         all
     }
 
-    /// The engine's steps from `start` on, minutes counted from it, jumps not yet set. Everything that drives
-    /// the body is in them: breath, apnoea, temperature, sedation. A volume read off after a change of pressure
-    /// or rate holds from the change on.
+    /// The engine's steps from `start` on, minutes counted from it, jumps not yet set. Everything that drives the
+    /// body is in them: breath, apnoea, temperature, sedation.
     pub fn steps(&self, start: Moment) -> Vec<Step> {
-        let mut driving = Driving::default();
-        let mut settings = Settings::default();
+        let Some(stretch) = &self.stretch else { return vec![] };
+        let mut moments: Vec<Moment> = stretch.settings.iter().map(|(at, _)| *at).collect();
+        for entry in self.entries.iter().filter(|e| self.drives(e)) {
+            let place = moments.partition_point(|at| *at <= entry.at);
+            moments.insert(place, entry.at);
+        }
+        moments.dedup();
         let mut steps: Vec<Step> = Vec::new();
-        let mut unread_since = None;
-        for entry in &self.entries {
-            let before = (settings, driving);
-            if let EntryKind::Settings(change) = &entry.kind {
-                settings = settings.after(change);
-            }
-            driving.apply(&entry.kind);
-            if (settings, driving) != before {
-                let at_min = entry.at.minutes_since(start);
-                match driving.step(&self.patient, &settings, unread_since.unwrap_or(at_min)) {
-                    Some(step) => {
-                        push_step(&mut steps, step);
-                        unread_since = None;
-                    }
-                    None if measurable(&settings) => unread_since = unread_since.or(Some(at_min)),
-                    None => unread_since = None,
-                }
+        for at in moments {
+            let before = stretch.settings.partition_point(|(from, _)| *from <= at);
+            let Some((_, settings)) = stretch.settings.get(before.saturating_sub(1)) else { continue };
+            if let Some(step) = self.step_for(settings, at, start) {
+                push_step(&mut steps, step);
             }
         }
         steps
     }
 
-    /// One step for `settings` at `minute`, with what drives the body at that moment.
+    /// One step for `settings` at `at`, with what drives the body at that moment.
     pub fn step_for(&self, settings: &Settings, at: Moment, start: Moment) -> Option<Step> {
+        let mut step = self.driving_at(at).step(&self.patient, settings, at.minutes_since(start))?;
+        step.apparatus_ml = step.apparatus_ml.or_else(|| self.first_apparatus());
+        Some(step)
+    }
+
+    /// What drives the body beside the breath at `at`. Telling is not changing: the first temperature and the
+    /// first depth of sedation hold from the beginning, only later ones are steps.
+    fn driving_at(&self, at: Moment) -> Driving {
         let mut driving = Driving::default();
-        self.entries.iter().filter(|e| e.at <= at).for_each(|entry| driving.apply(&entry.kind));
-        driving.step(&self.patient, settings, at.minutes_since(start))
+        for entry in self.entries.iter().filter(|e| self.drives(e)) {
+            let mut told = driving;
+            told.apply(&entry.kind);
+            if entry.at <= at {
+                driving = told;
+            } else {
+                driving.temperature_c = driving.temperature_c.or(told.temperature_c);
+                driving.depth = driving.depth.or(told.depth);
+            }
+        }
+        driving
+    }
+
+    /// Whether an entry changes what drives the body beside the breath.
+    fn drives(&self, entry: &case::Entry) -> bool {
+        match &entry.kind {
+            EntryKind::BreathingStopped(_)
+            | EntryKind::BreathingRestored
+            | EntryKind::Temperature(_)
+            | EntryKind::Sedation(_) => true,
+            EntryKind::Gas(gas) => {
+                gas.temperature_c.is_some() && self.verdict(&entry.id) != Some(GasChoice::Sample)
+            }
+            _ => false,
+        }
+    }
+
+    /// The first apparatus dead space typed: it was there before somebody said so.
+    fn first_apparatus(&self) -> Option<f64> {
+        self.settings.iter().find_map(|(_, settings)| settings.apparatus_dead_space_ml)
     }
 
     /// Whether nobody breathes for him at `moment`.
     pub fn breathing_stopped_at(&self, moment: Moment) -> bool {
-        let mut driving = Driving::default();
-        self.entries.iter().filter(|e| e.at <= moment).for_each(|entry| driving.apply(&entry.kind));
-        driving.stopped
+        self.driving_at(moment).stopped
+    }
+
+    /// Whether a relaxant is on board at `moment`.
+    pub fn relaxed_at(&self, moment: Moment) -> bool {
+        self.entries
+            .iter()
+            .filter(|e| e.at <= moment)
+            .filter_map(|e| if let EntryKind::Sedation(sedation) = e.kind { sedation.relaxant } else { None })
+            .next_back()
+            .unwrap_or(false)
     }
 
     /// What happened after `gas_at` that a forecast from that gas can't carry.
     pub fn unsettled_since(&self, gas_at: Moment) -> Option<Standing> {
-        self.entries.iter().filter(|e| e.at >= gas_at).find_map(|e| match &e.kind {
+        let lasting = |e: &case::Entry| match e.kind {
+            EntryKind::BicarbonateGiven { over_min, .. } => e.at.plus_minutes(over_min.unwrap_or(0.0)),
+            _ => e.at,
+        };
+        self.entries.iter().filter(|e| lasting(e) >= gas_at).find_map(|e| match &e.kind {
             EntryKind::NotUnderstood(unknown) if could_change_the_answer(&unknown.kind) => Some(withheld(
                 "not_understood",
                 format!(
@@ -269,11 +304,6 @@ fn could_change_the_answer(kind: &str) -> bool {
             | "circulation"
             | "given"
     )
-}
-
-/// Whether the breath under these settings can be read off, though it was not yet.
-fn measurable(settings: &Settings) -> bool {
-    !matches!(way(settings), Way::ByHand | Way::NoCurve | Way::NotSaid)
 }
 
 /// Adds a step; several at one moment or before the start leave only the last in force.

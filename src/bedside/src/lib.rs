@@ -9,6 +9,7 @@ mod forecast;
 mod history;
 mod offer;
 mod standing;
+mod stretch;
 mod study;
 mod summary;
 

@@ -52,7 +52,7 @@ const MOST_OFFERS: u32 = 3;
 /// The cost of `change` on top of `current`; `None` without a breath.
 pub(crate) fn price(patient: &Patient, current: &Settings, change: &Settings) -> Option<Price> {
     let planned = current.after(change);
-    let breath = planned.breath()?;
+    let breath = breath(&planned)?;
     Some(Price {
         rate_per_min: breath.rate_per_min,
         tidal_volume_ml: breath.tidal_volume_ml,
@@ -64,7 +64,7 @@ pub(crate) fn price(patient: &Patient, current: &Settings, change: &Settings) ->
 
 /// The plateau above PEEP grows with the breath, at the compliance that the typed one shows.
 fn scaled_plateau(current: &Settings, planned: &Settings) -> Option<f64> {
-    let (old, new) = (current.breath()?, planned.breath()?);
+    let (old, new) = (breath(current)?, breath(planned)?);
     let old_peep = current.total_peep_cmh2o.or(current.peep_cmh2o)?;
     let driving = current.plateau_cmh2o? - old_peep;
     let new_peep = planned.peep_cmh2o?;
@@ -126,7 +126,9 @@ impl Study {
         if retainer_unanswered(self, learnt) {
             return ph.p90 > s::PH_GOAL_HIGH.value;
         }
+        let skull = self.history.has(|c| *c == Condition::RaisedIntracranialPressure) == Some(true);
         ph.p50 > s::PH_GOAL_HIGH.value
+            || (skull && forecast.settled.paco2_mmhg.p50 < s::PACO2_USUAL_LOW.value)
     }
 
     fn overshoot_reason(&self, learnt: &Learnt) -> Caution {
@@ -139,7 +141,11 @@ impl Study {
             let words = "May usually retain CO₂: rates that could pass pH 7.45 wait for the history.";
             return because("retainer_question", words, Some(s::RETAINER_SBE.id));
         }
-        because("overshoot", "Rates that would pass pH 7.45 are not offered.", Some(s::PH_GOAL_HIGH.id))
+        because(
+            "overshoot",
+            "Rates that would pass pH 7.45, or fall under PaCO₂ 35 with raised pressure in the skull, are not offered.",
+            Some(s::PH_GOAL_HIGH.id),
+        )
     }
 
     /// The reason to offer nothing at all, if there is one.

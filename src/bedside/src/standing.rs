@@ -43,7 +43,11 @@ pub(crate) fn way(settings: &Settings) -> Way {
     if matches!(leak, Leak::Large | Leak::Unknown) {
         return Way::NoCurve;
     }
-    let effort = settings.effort.unwrap_or(Effort::Unknown);
+    let effort = match (settings.effort, settings.rate_total_per_min, settings.rate_per_min) {
+        // More breaths than are set are his own, whatever was said.
+        (Some(Effort::None), Some(total), Some(set)) if total > set => Effort::Present,
+        (effort, ..) => effort.unwrap_or(Effort::Unknown),
+    };
     match (tube, settings.control, effort, leak) {
         (true, Some(Control::Volume), Effort::None, Leak::None) => Way::Passive,
         (true, Some(Control::Pressure), Effort::None, Leak::None) => Way::PressurePassive,
@@ -68,8 +72,7 @@ pub(crate) fn breath(settings: &Settings) -> Option<Breath> {
     }
 }
 
-/// The standing that follows from the way alone; `moved` when what drives the breath was changed after the
-/// volume was last read.
+/// The standing that follows from the way alone.
 pub(crate) fn standing_of(settings: &Settings) -> Standing {
     let breath = breath(settings);
     match (way(settings), breath) {

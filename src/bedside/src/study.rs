@@ -12,6 +12,7 @@ use sources as s;
 
 use crate::history::{History, UsableGas};
 use crate::standing::{Way, breath, standing_of, way, withheld};
+use crate::stretch::{Before, Stretch};
 use crate::summary::{Anchor, SETTLING_MIN, reading_95};
 use crate::{
     Answer, Caution, Forecast, Price, Quantiles, Ratio, Standing, Status, assumed, cautions, summary,
@@ -73,7 +74,8 @@ pub struct Study {
     pub(crate) history: History,
     learnt: Result<Learnt, Standing>,
     doubt: Option<Doubt>,
-    last_touched: Option<Moment>,
+    /// When anything was written or was so, in order.
+    touched: Vec<Moment>,
 }
 
 /// What was learnt.
@@ -90,6 +92,9 @@ pub(crate) struct Learnt {
     /// The last gas learnt from.
     pub(crate) last_gas: case::Gas,
     pub(crate) last_gas_at: Moment,
+    pub(crate) first_gas: case::Gas,
+    /// How far the first gas lies from what was expected before it, in standard deviations of ln.
+    pub(crate) surprise: f64,
     pub(crate) hb_known: bool,
     pub(crate) saturation_known: bool,
 }
@@ -99,18 +104,21 @@ impl Study {
     #[must_use]
     pub fn new(case: &Case, options: Options) -> Self {
         let history = History::of(case);
-        let touched = |e: &case::Entry| {
-            e.written_at.map_or(e.at, |written| if written > e.at { written } else { e.at })
-        };
-        let last_touched = case.entries().iter().map(touched).max();
+        let mut touched: Vec<Moment> = Vec::new();
+        for entry in case.entries() {
+            let at = entry
+                .written_at
+                .map_or(entry.at, |written| if written > entry.at { written } else { entry.at });
+            touched.insert(touched.partition_point(|earlier| *earlier <= at), at);
+        }
         let (learnt, doubt) = learn(&history, options);
-        Self { learnt, doubt, last_touched, history }
+        Self { learnt, doubt, touched, history }
     }
 
     /// How long ago the case was last confirmed.
     #[must_use]
     pub fn freshness(&self, now: &Now) -> Freshness {
-        let Some(since) = self.last_touched else { return Freshness::NoEntries };
+        let Some(since) = self.last_touched(now) else { return Freshness::NoEntries };
         let minutes = now.wall.minutes_since(since);
         if minutes >= s::VALID_FOR.value {
             Freshness::Expired { since }
@@ -119,6 +127,13 @@ impl Study {
         } else {
             Freshness::Fresh
         }
+    }
+
+    /// The last moment at which somebody wrote or saw something, as of `now`: what a wrong clock has put into the
+    /// future confirms nothing, unless there is nothing else.
+    fn last_touched(&self, now: &Now) -> Option<Moment> {
+        let past = self.touched.partition_point(|at| *at <= now.wall);
+        self.touched[..past].last().or(self.touched.first()).copied()
     }
 
     /// Whether there may be an answer now.
@@ -142,6 +157,12 @@ impl Study {
                 words,
                 "Type a gas, or what has changed, or that nothing has.",
             ));
+        }
+        if self.history.relaxed_at(now.wall) && way(settings) == Way::OwnBreaths {
+            let would_help =
+                "Raise the rate first. Then type what the machine gives, with no breaths of his own.";
+            standing =
+                standing.and(withheld("relaxant", "Relaxed, he takes no breaths of his own.", would_help));
         }
         if self.history.breathing_stopped_at(now.wall) {
             standing = standing.and(withheld(
@@ -209,12 +230,22 @@ impl Study {
         Some(step)
     }
 
+    /// Whether `planned` brings less alveolar ventilation than `current`, at the means.
+    pub(crate) fn ventilates_less(&self, current: &Settings, planned: &Settings) -> bool {
+        let Ok(learnt) = &self.learnt else { return false };
+        let step = |settings| self.history.step_for(settings, learnt.last_gas_at, learnt.start);
+        match (step(current), step(planned)) {
+            (Some(old), Some(new)) => learnt.priors.alveolar_l_min(&new) < learnt.priors.alveolar_l_min(&old),
+            _ => false,
+        }
+    }
+
     /// An answer's frame: standing, validity, what is assumed, what to heed.
     pub(crate) fn answer<T>(&self, now: &Now, standing: Standing) -> Answer<T> {
         Answer {
             standing,
             value: None,
-            valid_until: self.last_touched.map(|at| at.plus_minutes(s::VALID_FOR.value)),
+            valid_until: self.last_touched(now).map(|at| at.plus_minutes(s::VALID_FOR.value)),
             assumed: self.learnt.as_ref().map_or_else(|_| vec![], |learnt| assumed::of(self, learnt)),
             cautions: self.cautions(now),
         }
@@ -233,7 +264,8 @@ impl Study {
     pub fn ratio(&self, now: &Now) -> Option<Ratio> {
         let settings = self.history.settings_at(now.wall);
         let Ok(learnt) = &self.learnt else { return None };
-        if way(&settings) != Way::Support || breath(&settings).is_none() {
+        let silent = self.standing(now).withheld.iter().any(|why| why.id != "pressure_support");
+        if silent || way(&settings) != Way::Support || breath(&settings).is_none() {
             return None;
         }
         let now_min = now.wall.minutes_since(learnt.start);
@@ -318,7 +350,8 @@ fn learn(history: &History, options: Options) -> (Result<Learnt, Standing>, Opti
             );
             return (Err(why), Some(doubt));
         }
-        match learn_from(history, &gases[..=count], options) {
+        let surprise = learnt.as_ref().map(|before| before.surprise);
+        match learn_from(history, &gases[..=count], options, surprise) {
             Ok(next) => learnt = Some(next),
             Err(why) => return (Err(why), None),
         }
@@ -357,14 +390,31 @@ fn usable(history: &History) -> Result<Vec<UsableGas<'_>>, Standing> {
         .rposition(|g| matches!(g.verdict, Some(case::GasChoice::Patient | case::GasChoice::Machine)))
         .unwrap_or(0);
     let usable: Vec<UsableGas<'_>> = gases[restart..].iter().copied().filter(|g| g.at >= from).collect();
+    if usable.first().is_some_and(|first| after_hand(history, first)) {
+        return Err(withheld(
+            "after_hand",
+            "The gas was drawn soon after ventilation by hand: nothing was settled then.",
+            "Draw one when the machine's settings have held 30 min.",
+        ));
+    }
     if usable.is_empty() {
         return Err(withheld(
             "no_gas_since",
-            "No arterial gas since how he breathes changed.",
+            "No arterial gas since his breathing or circulation changed.",
             "Type the next gas, or the settings that held when the last one was drawn.",
         ));
     }
     Ok(usable)
+}
+
+/// Whether a gas was drawn so soon after ventilation by hand that its PaCO2 says little about the machine's.
+fn after_hand(history: &History, gas: &UsableGas<'_>) -> bool {
+    let by_hand = |stretch: &Stretch| stretch.before == Before::ByHand;
+    history
+        .stretch
+        .as_ref()
+        .filter(|s| by_hand(s))
+        .is_some_and(|stretch| gas.at.minutes_since(stretch.from) < s::SETTLED_AFTER.value)
 }
 
 fn no_settings() -> Standing {
@@ -377,14 +427,14 @@ fn only_other_samples(history: &History) -> Option<Standing> {
         case::EntryKind::Gas(gas) if gas.site != case::Site::Arterial => Some(withheld(
             "not_arterial",
             format!(
-                "PCO₂ {:.0} is not arterial. In one patient PaCO₂ can be 20 lower or more; pH about .03 higher.",
+                "PCO₂ {:.0} is not arterial: in one patient PaCO₂ may lie 20 lower or higher; pH about .03 higher.",
                 gas.pco2_mmhg
             ),
             "Draw an arterial gas for a forecast.",
         )),
         case::EntryKind::EndTidal(reading) => Some(withheld(
             "end_tidal_only",
-            format!("EtCO₂ {:.0} alone gives no pH and no forecast: PaCO₂ is higher, by an unknown gap.", reading.etco2_mmhg),
+            format!("EtCO₂ {:.0} alone gives no pH and no forecast: PaCO₂ is usually higher, by an unknown gap.", reading.etco2_mmhg),
             "Draw an arterial gas.",
         )),
         _ => None,
@@ -401,7 +451,12 @@ fn doubt_about(before: &Learnt, gas: &UsableGas<'_>) -> Option<Doubt> {
     (!fits).then(|| Doubt { gas: gas.id.clone(), at: gas.at, measured_mmhg: read, expected_mmhg })
 }
 
-fn learn_from(history: &History, gases: &[UsableGas<'_>], options: Options) -> Result<Learnt, Standing> {
+fn learn_from(
+    history: &History,
+    gases: &[UsableGas<'_>],
+    options: Options,
+    surprise: Option<f64>,
+) -> Result<Learnt, Standing> {
     let (first, last) = (&gases[0], &gases[gases.len() - 1]);
     let (start, offset_sd) = start_of(history, first).ok_or_else(no_settings)?;
     let mut steps = history.steps(start);
@@ -430,6 +485,7 @@ fn learn_from(history: &History, gases: &[UsableGas<'_>], options: Options) -> R
     let ensemble = learning.ensemble(options.members, options.seed).map_err(|e| {
         withheld("no_body_fits", e.to_string(), "Check settings and gases; start again from a new gas.")
     })?;
+    let surprise = surprise.unwrap_or_else(|| learning.surprise(options.members, options.seed));
     let anchor = Anchor { at_min: last.at.minutes_since(start), ph: last.gas.ph };
     let (last_gas, last_gas_at) = (*last.gas, last.at);
     Ok(Learnt {
@@ -440,6 +496,8 @@ fn learn_from(history: &History, gases: &[UsableGas<'_>], options: Options) -> R
         anchor,
         standard_be: input.standard_be,
         last_gas,
+        first_gas: *first.gas,
+        surprise,
         last_gas_at,
         hb_known,
         saturation_known,
@@ -458,8 +516,11 @@ fn start_of(history: &History, first: &UsableGas<'_>) -> Option<(Moment, f64)> {
     let held_min = first.gas.settings_held_min;
     let held_since = first.at.plus_minutes(-held_min.unwrap_or(0.0));
     let start = if held_since < from { held_since } else { from };
-    let changed_just_before = held_min == Some(0.0) && start >= first.at;
-    Some((start, if changed_just_before { s::START_OFFSET_CHANGED.spread } else { s::START_OFFSET.spread }))
+    let moving = held_min.is_some_and(|minutes| minutes < s::JUST_CHANGED.value) && start >= held_since;
+    let unknown_before = history.stretch.as_ref().is_some_and(|stretch| stretch.before != Before::Nothing);
+    let spread =
+        if moving || unknown_before { s::START_OFFSET_CHANGED.spread } else { s::START_OFFSET.spread };
+    Some((start, spread))
 }
 
 fn priors_with_jumps(history: &History, steps: Vec<Step>, offset_sd: f64) -> Priors {
@@ -469,11 +530,7 @@ fn priors_with_jumps(history: &History, steps: Vec<Step>, offset_sd: f64) -> Pri
     let make =
         |steps: &[Step]| Priors::new(&history.patient, tube, injury, &history.measured(), steps, offset_sd);
     let without = make(&steps);
-    let mut with = steps;
-    for i in 1..with.len() {
-        with[i].jump_sd = without.jump_sd(&with[i - 1], &with[i]);
-    }
-    make(&with)
+    make(&without.with_jumps(steps))
 }
 
 /// The blood: base excess of the last gas, haemoglobin and saturation as far as known.

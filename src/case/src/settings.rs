@@ -105,14 +105,19 @@ pub struct Breath {
 }
 
 impl Settings {
-    /// The state after `change`. A change of what drives the breath makes expired volumes measured
-    /// before it stale: they are dropped unless the same entry gives them anew. The same for peak,
-    /// total PEEP and the flow's return; a plateau outlives a new rate, but no new volume or pressure.
+    /// The state after `change`.
+    ///
+    /// What was measured holds until what drives the breath is changed. Then it is dropped, but for a volume that
+    /// a machine sets against a passive patient: there the share that arrived before is taken to arrive again. A
+    /// measured value typed later puts aside older ones that it contradicts. A plateau outlives a new rate, but
+    /// no new volume or pressure; peak, total PEEP and the flow's return outlive nothing.
     #[must_use]
     pub fn after(&self, change: &Settings) -> Settings {
         let driven_anew = self.breath_differs(change);
         let keep = |old: Option<f64>| if driven_anew { None } else { old };
-        Settings {
+        let counted_anew =
+            change.rate_total_per_min.is_some() && change.rate_total_per_min != self.rate_total_per_min;
+        let mut after = Settings {
             airway: change.airway.or(self.airway),
             control: change.control.or(self.control),
             effort: change.effort.or(self.effort),
@@ -139,7 +144,37 @@ impl Settings {
             },
             fio2: change.fio2.or(self.fio2),
             apparatus_dead_space_ml: change.apparatus_dead_space_ml.or(self.apparatus_dead_space_ml),
+        };
+        if change.minute_volume_l_min.is_none() && (change.tidal_volume_expired_ml.is_some() || counted_anew)
+        {
+            after.minute_volume_l_min = None;
         }
+        if change.minute_volume_l_min.is_some() && change.tidal_volume_expired_ml.is_none() {
+            after.tidal_volume_expired_ml = None;
+        }
+        if driven_anew && !after.is_measured() {
+            after.tidal_volume_expired_ml =
+                self.arriving_share().and_then(|share| after.passive_volume().map(|ml| ml * share));
+        }
+        after
+    }
+
+    fn is_measured(&self) -> bool {
+        self.minute_volume_l_min.is_some() || self.tidal_volume_expired_ml.is_some()
+    }
+
+    /// The volume set against a patient without breaths of his own.
+    fn passive_volume(&self) -> Option<f64> {
+        let passive = self.control == Some(Control::Volume)
+            && self.effort == Some(Effort::None)
+            && self.rate_total_per_min.is_none();
+        self.tidal_volume_ml.filter(|_| passive)
+    }
+
+    /// Measured over set volume, where a machine sets it and it was measured.
+    fn arriving_share(&self) -> Option<f64> {
+        let measured = self.breath().filter(|breath| breath.measured)?;
+        self.passive_volume().map(|set| measured.tidal_volume_ml / set)
     }
 
     /// Whether `change` sets another rate, volume, pressure, inspiratory time, airway or control.
@@ -201,6 +236,31 @@ mod tests {
         let faster = measured.after(&Settings { rate_per_min: Some(24.0), ..Settings::default() });
         let breath = faster.breath().unwrap();
         assert_eq!((breath.rate_per_min, breath.tidal_volume_ml, breath.measured), (24.0, 340.0, false));
+    }
+
+    #[test]
+    fn the_share_that_arrives_of_a_set_volume_is_carried_on() {
+        let passive = Settings { control: Some(Control::Volume), effort: Some(Effort::None), ..ferry() };
+        let measured = passive.after(&Settings { minute_volume_l_min: Some(5.4), ..Settings::default() });
+        for (change, ml) in [
+            (Settings { rate_per_min: Some(24.0), ..Settings::default() }, 300.0),
+            (Settings { tidal_volume_ml: Some(408.0), ..Settings::default() }, 360.0),
+            (Settings { peep_cmh2o: Some(12.0), ..Settings::default() }, 300.0),
+        ] {
+            let breath = measured.after(&change).breath().unwrap();
+            assert!((breath.tidal_volume_ml - ml).abs() < 1e-9, "{change:?}: {breath:?}");
+        }
+    }
+
+    #[test]
+    fn a_new_measured_value_puts_older_ones_aside() {
+        let both = Settings { rate_total_per_min: Some(26.0), minute_volume_l_min: Some(9.0), ..ferry() };
+        let counted = both.after(&Settings { rate_total_per_min: Some(14.0), ..Settings::default() });
+        assert_eq!(counted.breath().map(|b| b.tidal_volume_ml), Some(340.0));
+        let read = both.after(&Settings { tidal_volume_expired_ml: Some(220.0), ..Settings::default() });
+        assert_eq!(read.breath().map(|b| b.tidal_volume_ml), Some(220.0));
+        let minute = read.after(&Settings { minute_volume_l_min: Some(7.8), ..Settings::default() });
+        assert_eq!(minute.breath().map(|b| b.tidal_volume_ml), Some(300.0));
     }
 
     #[test]

@@ -1,6 +1,6 @@
 //! The case as a time line: one total order, corrections resolved, two copies joined.
 
-use crate::{Entry, EntryId, EntryKind, Gas, GasChoice, Moment, Person, Settings};
+use crate::{Entry, EntryId, EntryKind, Gas, Moment, Person, Settings};
 
 /// One patient, under a label of the user's choice. Never an identifier.
 #[derive(Debug, Clone, PartialEq, Default)]
@@ -104,20 +104,10 @@ impl Case {
             .collect()
     }
 
-    /// The last decision written about a gas.
-    #[must_use]
-    pub fn verdict(&self, gas: &EntryId) -> Option<GasChoice> {
-        self.resolved()
-            .into_iter()
-            .filter_map(|e| if let EntryKind::GasVerdict(v) = e.kind { Some(v) } else { None })
-            .rfind(|v| v.of == *gas)
-            .map(|v| v.choice)
-    }
-
-    /// The moment of the last entry.
+    /// The moment of the last entry, corrections included.
     #[must_use]
     pub fn last_at(&self) -> Option<Moment> {
-        self.resolved().last().map(|e| e.at)
+        self.entries.last().map(|e| e.at)
     }
 
     /// Joins another copy of the same case: a union by id, so that the order of joining does not matter.

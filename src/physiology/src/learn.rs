@@ -85,6 +85,25 @@ impl Learning<'_> {
     }
 }
 
+impl Learning<'_> {
+    /// How far the first gas lies from what was expected before it, in standard deviations of ln; 0 without one.
+    #[must_use]
+    pub fn surprise(&self, members: usize, seed: u32) -> f64 {
+        let Some(first) = self.observations.first() else { return 0.0 };
+        let schedule = self.priors.schedule(first.at_min);
+        let n = self.priors.dimensions();
+        let logs: Vec<f64> = standard_normals(members, n, seed)
+            .iter()
+            .map(|row| self.priors.drawn(row, self.chemistry).course_over(self.chemistry, &schedule))
+            .map(|course| log(course.paco2_at(first.at_min)))
+            .collect();
+        let count = logs.len() as f64;
+        let mean = logs.iter().sum::<f64>() / count;
+        let variance = logs.iter().map(|l| (l - mean) * (l - mean)).sum::<f64>() / count;
+        (log(first.paco2_mmhg) - mean) / sqrt(variance + first.ln_sd * first.ln_sd)
+    }
+}
+
 /// What is learnt from, with the solver's moments up to the last gas; none without one.
 struct Fit<'a> {
     learning: Learning<'a>,

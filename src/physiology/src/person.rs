@@ -104,7 +104,7 @@ impl Patient {
     pub fn predicted_body_weight_kg(&self) -> Option<f64> {
         match (self.is_child(), self.sex, self.height_cm) {
             (false, Some(sex), Some(height)) => {
-                Some(predicted_body_weight_kg(sex, height)).filter(|kg| *kg > 0.0)
+                Some(predicted_body_weight_kg(sex, height)).filter(|kg| *kg > s::PBW_LEAST.value)
             }
             _ => None,
         }
@@ -183,20 +183,27 @@ impl Patient {
         Production { resting: FlowStpd(kcal_day * s::VCO2_PER_KCAL.value), ln_sd: root_of_squares(&spreads) }
     }
 
-    /// Series dead space without the apparatus, mL, and the spread of ln. A tube's figure for small children
-    /// holds the circuit too.
-    pub(crate) fn series_dead_space_ml(&self, tube: bool) -> (f64, f64) {
+    /// Series dead space without the apparatus, mL, and the spread of ln. A small child's figure with a tube holds
+    /// the circuit too, so it is used only where the apparatus was not typed.
+    pub(crate) fn series_dead_space_ml(&self, tube: bool, apparatus_typed: bool) -> (f64, f64) {
         let kg = self.size().lean_kg;
-        match (self.is_child(), tube) {
-            (true, true) => (s::SERIES_TUBE_CHILD.value * kg, s::SERIES_TUBE_CHILD.spread),
-            (true, false) => {
-                let age = self.age_years.unwrap_or(0.0);
-                let per_kg = s::SERIES_CHILD.value - s::SERIES_CHILD_AGE.value * log(1.0 + age);
-                (per_kg * kg, s::SERIES_NO_TUBE.spread)
-            }
-            (false, true) => (s::SERIES_TUBE.value * kg, s::SERIES_TUBE.spread),
-            (false, false) => (s::SERIES_NO_TUBE.value * kg, s::SERIES_NO_TUBE.spread),
+        if self.circuit_in_series(tube, apparatus_typed) {
+            return (s::SERIES_TUBE_CHILD.value * kg, s::SERIES_TUBE_CHILD.spread);
         }
+        let without_tube = if self.is_child() {
+            let age = self.age_years.unwrap_or(0.0);
+            s::SERIES_CHILD.value - s::SERIES_CHILD_AGE.value * log(1.0 + age)
+        } else {
+            s::SERIES_NO_TUBE.value
+        };
+        let halved = s::SERIES_TUBE.value / s::SERIES_NO_TUBE.value;
+        (without_tube * kg * if tube { halved } else { 1.0 }, s::SERIES_NO_TUBE.spread)
+    }
+
+    /// Whether the series figure holds the circuit: a small child with a tube, apparatus not typed.
+    pub(crate) fn circuit_in_series(&self, tube: bool, apparatus_typed: bool) -> bool {
+        let small = self.age_years.is_some_and(|age| age < s::SMALLWOOD_OLDER_FROM.value);
+        tube && small && !apparatus_typed
     }
 
     /// Functional residual capacity, mL BTPS, and the spread of ln.

@@ -81,6 +81,10 @@ pub struct Means {
     pub alveolar_dead_share: f64,
     /// Cardiac output, L/min.
     pub cardiac_output_l_min: f64,
+    /// Whether the apparatus dead space was not typed and stands apart.
+    pub apparatus_assumed: bool,
+    /// Whether the series dead space holds the circuit.
+    pub circuit_in_series: bool,
 }
 
 /// Everything known before a gas.
@@ -142,18 +146,19 @@ impl Priors {
     ) -> Self {
         let size = patient.size();
         let production = patient.production();
-        let (series_ml, series_sd) = patient.series_dead_space_ml(tube);
         let (frc_ml, frc_sd) = patient.frc_ml();
         let spread = |sd: f64| if measured.without_spread { 0.0 } else { sd };
         let scale = size.lean_kg / s::BODY_REFERENCE.value;
         let typical_output = s::CARDIAC_OUTPUT.value * libm::pow(scale, s::CARDIAC_OUTPUT_POWER.value);
         let first = steps.first().copied().unwrap_or(NO_STEP);
+        let apparatus_typed = first.apparatus_ml.is_some();
+        let (series_ml, series_sd) = patient.series_dead_space_ml(tube, apparatus_typed);
         let either = |given: Option<f64>, given_sd: f64, mean: f64, sd: f64| match given {
             Some(value) => Prior { mean: value, sd: spread(given_sd) },
             None => Prior { mean, sd: spread(sd) },
         };
         let measured_resting = measured.vco2_ml_min.map(|ml| ml / first.production_factor);
-        let series_holds_apparatus = patient.is_child() && tube;
+        let series_holds_apparatus = patient.circuit_in_series(tube, apparatus_typed);
         Self {
             size: Prior { mean: size.lean_kg, sd: spread(size.ln_sd) },
             tissue_kg: size.tissue_kg,
@@ -209,6 +214,8 @@ impl Priors {
             series_ml: self.series.mean,
             alveolar_dead_share: logistic(self.alveolar_logit.mean),
             cardiac_output_l_min: self.output.mean,
+            apparatus_assumed: first.apparatus_ml.is_none() && !self.series_holds_apparatus,
+            circuit_in_series: self.series_holds_apparatus,
         }
     }
 
@@ -230,6 +237,25 @@ impl Priors {
         }
         let size = log(new / old).abs() / log(s::JUMP_FULL_AT.value);
         s::JUMP.spread * if size < 1.0 { size } else { 1.0 }
+    }
+
+    /// The same steps, each with the jump that its change from the last breathed step brings.
+    #[must_use]
+    pub fn with_jumps(&self, mut steps: Vec<Step>) -> Vec<Step> {
+        let mut breathed: Option<Step> = None;
+        for step in &mut steps {
+            step.jump_sd = breathed.map_or(0.0, |before| self.jump_sd(&before, step));
+            if step.rate_per_min > 0.0 {
+                breathed = Some(*step);
+            }
+        }
+        steps
+    }
+
+    /// Alveolar ventilation under `step` at the means, L/min BTPS.
+    #[must_use]
+    pub fn alveolar_l_min(&self, step: &Step) -> f64 {
+        self.member(&vec![0.0; self.dimensions()], None).alveolar_l_min(step, 0.0)
     }
 
     /// The body at the middle of every prior.
@@ -303,7 +329,8 @@ impl Priors {
         self.meet_measured_fraction(&mut member, u);
         self.set_production(&mut member, u, size_factor);
         if let Some(chemistry) = chemistry {
-            set_offsets(&mut member, chemistry);
+            let factor = self.steps.first().map_or(1.0, |step| step.production_factor);
+            set_offsets(&mut member, chemistry, factor);
         }
         self.set_inputs(&mut member, u);
         member
@@ -406,9 +433,9 @@ fn alveolar_prior(lung_injury: bool, first: &Step, series_ml: f64, shape_sd: f64
 }
 
 /// Content gained by giving up oxygen: the share of oxygen used in a tissue is its share of production.
-fn set_offsets(member: &mut Member, chemistry: &Chemistry) {
+fn set_offsets(member: &mut Member, chemistry: &Chemistry, production_factor: f64) {
     let blood = chemistry.input();
-    let oxygen_used = member.resting_ml_min / s::RQ.value;
+    let oxygen_used = member.resting_ml_min * production_factor / s::RQ.value;
     let capacity_ml_l = s::O2_PER_HB.value * blood.hb_g_dl * 10.0;
     let offset = |share: f64, flow: f64| {
         let wanted = oxygen_used * share / (flow * capacity_ml_l);

@@ -275,14 +275,11 @@ fn history(draws: &mut Draws, patient: &Patient) -> (Vec<Step>, Vec<f64>) {
 }
 
 /// Priors over `steps`, each with the jump that its size brings.
-fn with_jumps(patient: &Patient, mut steps: Vec<Step>) -> Priors {
+fn with_jumps(patient: &Patient, steps: Vec<Step>) -> Priors {
     let make =
         |steps: &[Step]| Priors::new(patient, true, false, &Exact::default(), steps, s::START_OFFSET.spread);
     let without = make(&steps);
-    for i in 1..steps.len() {
-        steps[i].jump_sd = without.jump_sd(&steps[i - 1], &steps[i]);
-    }
-    make(&steps)
+    make(&without.with_jumps(steps))
 }
 
 /// The curve of blood at this base excess; bodies drawn here are inside what it can be made for.
