@@ -179,3 +179,20 @@ fn arguments_are_said_on_one_line_and_help_keeps_standard_output_clean() {
     assert!(help.status.success() && help.stdout.is_empty());
     assert!(String::from_utf8(help.stderr).unwrap().contains("--minutes LIST"));
 }
+
+#[test]
+fn a_correction_written_after_the_last_entry_counts_without_being_asked_for() {
+    let text = std::fs::read_to_string(fixture("night-ferry.json")).unwrap();
+    let mut case: Value = serde_json::from_str(&text).unwrap();
+    let entries = case["entries"].as_array_mut().unwrap();
+    entries.retain(|entry| entry["kind"] != "end_tidal");
+    let gas = entries.iter().find(|entry| entry["kind"] == "gas").unwrap()["id"].clone();
+    entries.push(serde_json::json!({
+        "id": "fix", "at": "2026-03-02T21:25:00Z", "kind": "correction", "of": gas,
+        "values": { "ph": 7.30, "pco2_mmhg": 51, "hco3_printed_mmol_l": 24.4 },
+    }));
+    let file = file_with(case.to_string().as_bytes());
+    let answer = answer(file.path(), &["--minutes", "0"]);
+    assert_eq!(answer["at"], "2026-03-02T21:25:00Z");
+    assert!(answer["paco2_mmhg"]["p50"][0].as_f64().unwrap() < 55.0, "{}", answer["paco2_mmhg"]);
+}
