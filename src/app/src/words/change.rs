@@ -59,7 +59,7 @@ pub fn compared(settings: &Settings, change: &Settings) -> String {
     format!("if {}", parts.join(", "))
 }
 /// Price headings.
-pub const PRICE: [&str; 3] = ["volume", "plateau", "minute volume"];
+pub const PRICE: [&str; 3] = ["per kg", "plateau", "minute volume"];
 /// Units under the prices.
 pub const PRICE_UNITS: [&str; 3] = ["mL/kg", "cmH₂O", "L/min"];
 /// What stands there while a price isn't known.
