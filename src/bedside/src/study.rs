@@ -74,7 +74,7 @@ pub struct Study {
     pub(crate) history: History,
     learnt: Result<Learnt, Standing>,
     doubt: Option<Doubt>,
-    /// When anything was written or was so, in order.
+    /// The moments of all entries, in order.
     touched: Vec<Moment>,
 }
 
@@ -104,13 +104,8 @@ impl Study {
     #[must_use]
     pub fn new(case: &Case, options: Options) -> Self {
         let history = History::of(case);
-        let mut touched: Vec<Moment> = Vec::new();
-        for entry in case.entries() {
-            let at = entry
-                .written_at
-                .map_or(entry.at, |written| if written > entry.at { written } else { entry.at });
-            touched.insert(touched.partition_point(|earlier| *earlier <= at), at);
-        }
+        // When it was so, not when it was typed: a gas of an hour ago confirms nothing about now.
+        let touched = case.entries().iter().map(|entry| entry.at).collect();
         let (learnt, doubt) = learn(&history, options);
         Self { learnt, doubt, touched, history }
     }
@@ -150,6 +145,13 @@ impl Study {
             },
             Err(why) => why.clone(),
         };
+        if let Some(last) =
+            self.touched.last().filter(|last| last.minutes_since(now.wall) > s::CLOCKS_APART.value)
+        {
+            let words =
+                format!("The last entry is of {}, later than this clock.", last.clock(now.utc_offset_min));
+            standing = standing.and(withheld("clock", words, "Check the clock of this phone."));
+        }
         if let Freshness::Expired { since } = self.freshness(now) {
             let words = format!("Not known since {}.", since.clock(now.utc_offset_min));
             standing = standing.and(withheld(

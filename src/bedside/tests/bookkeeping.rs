@@ -157,11 +157,27 @@ fn a_first_gas_that_hardly_fits_its_settings_is_said() {
 }
 
 #[test]
-fn what_a_wrong_clock_put_into_the_future_confirms_nothing() {
+fn a_clock_behind_the_record_silences_it() {
     let mut case = night_ferry();
     add(&mut case, "u", 600.0, EntryKind::Unchanged);
-    let answer = Study::new(&case, Options::default()).forecast(&now(90.0), None, &[0.0]);
-    assert_eq!(answer.standing.status, Status::Withheld);
+    for minute in [-60.0, 10.0, 90.0] {
+        let answer = Study::new(&case, Options::default()).forecast(&now(minute), None, &[0.0]);
+        assert_eq!(answer.standing.status, Status::Withheld);
+        assert!(answer.standing.withheld.iter().any(|why| why.id == "clock"));
+    }
+    assert!(
+        Study::new(&night_ferry(), Options::default()).forecast(&now(-1.0), None, &[0.0]).value.is_some()
+    );
+}
+
+#[test]
+fn an_old_gas_typed_now_confirms_nothing_about_now() {
+    let mut case = night_ferry();
+    let mut late = entry("n", -20.0, EntryKind::Note("typed an hour later".into()));
+    late.written_at = Some(at(61.0));
+    case.add(late).unwrap();
+    let answer = Study::new(&case, Options::default()).forecast(&now(61.0), None, &[0.0]);
+    assert!(answer.standing.withheld.iter().any(|why| why.id == "expired"));
 }
 
 #[test]

@@ -27,6 +27,7 @@ figures! { BEDSIDE;
     RATE_UNUSUAL = 40.0, 0.0, "/min", "Rate over which it is asked about", "Assumed", Assumed;
     SETTLED_WITHIN = 2.0, 0.0, "mmHg", "Distance from the settled value that counts as settled", "Assumed", Assumed;
     STILL_SO_AFTER = 30.0, 0.0, "min", "Minutes without an entry after which the tool asks whether nothing changed", "Assumed", Assumed;
+    CLOCKS_APART = 2.0, 0.0, "min", "Minutes that an entry may lie ahead of the clock before the clock is doubted", "Assumed", Assumed;
     VALID_FOR = 60.0, 0.0, "min", "Minutes without an entry after which the number is taken away", "Assumed", Assumed;
     HORIZON = 240.0, 0.0, "min", "How far ahead a forecast may run", "Assumed", Assumed;
     CIRCULATION_STEADY_FOR = 20.0, 0.0, "min", "Minutes of steady circulation before a gas counts", "Assumed", Assumed;
