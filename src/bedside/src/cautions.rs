@@ -17,6 +17,10 @@ pub(crate) fn of_case(study: &Study, now: &Now) -> Vec<Caution> {
     let mut all = Vec::new();
     let settings = study.history.settings_at(now.wall);
     trapping(study, &settings, &mut all);
+    // Whether or not there may be a forecast: the last arterial gas speaks for itself.
+    if let Some(gas) = study.history.arterial_gases().last().filter(|g| g.gas.ph < s::CALL_PH.value) {
+        all.push(caution("call", format!("pH {:.2}: call for help now.", gas.gas.ph), Some(&s::CALL_PH)));
+    }
     if let Some(learnt) = study.learnt() {
         gas_cautions(study, learnt, &mut all);
     }
@@ -46,9 +50,6 @@ fn trapping(study: &Study, settings: &Settings, all: &mut Vec<Caution>) {
 
 fn gas_cautions(study: &Study, learnt: &Learnt, all: &mut Vec<Caution>) {
     let gas = &learnt.last_gas;
-    if gas.ph < s::CALL_PH.value {
-        all.push(caution("call", format!("pH {:.2}: call for help now.", gas.ph), Some(&s::CALL_PH)));
-    }
     if learnt.surprise.abs() > s::SURPRISE.value {
         let seldom = if learnt.surprise > 0.0 { "high" } else { "low" };
         let words =

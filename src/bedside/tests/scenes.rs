@@ -102,6 +102,10 @@ fn a_mask_with_a_large_leak_gets_no_curve() {
     assert!(answer.standing.withheld[0].words.contains("No forecast"));
     assert!(answer.standing.withheld[0].would_help.contains("30 to 60 min"));
     assert!(study.offers(&now(5.0)).value.is_none());
+    assert!(
+        study.cautions(&now(5.0)).iter().any(|c| c.id == "call"),
+        "pH 7.24 needs help with or without a curve"
+    );
 }
 
 #[test]
