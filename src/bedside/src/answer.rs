@@ -45,12 +45,24 @@ pub struct Caution {
 }
 
 impl Caution {
+    /// Whether it says what a change itself could do to this patient.
+    pub(crate) fn is_danger(&self) -> bool {
+        matches!(self.id, "relaxant" | "obstruction_rate" | "metabolic_less")
+    }
+
     /// Whether it says that this change could hurt or breaks a limit: it then stands over the answer.
     #[must_use]
     pub fn comes_first(&self) -> bool {
         matches!(
             self.id,
-            "relaxant" | "obstruction_rate" | "metabolic_less" | "plateau" | "rate" | "ml_per_kg"
+            "relaxant"
+                | "ph_low"
+                | "ph_high"
+                | "obstruction_rate"
+                | "metabolic_less"
+                | "plateau"
+                | "rate"
+                | "ml_per_kg"
         )
     }
 }

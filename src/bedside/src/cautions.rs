@@ -4,9 +4,9 @@ use case::{Condition, Control, Effort, EntryKind, Now, Settings};
 use sources as s;
 use units::{Kpa, Mmhg};
 
-use crate::Caution;
 use crate::offer::{Price, price};
 use crate::study::{Learnt, Study};
+use crate::{Caution, Settled};
 
 fn caution(id: &'static str, words: impl Into<String>, source: Option<&s::Figure>) -> Caution {
     Caution { id, words: words.into(), source: source.map(|figure| figure.id) }
@@ -19,7 +19,8 @@ pub(crate) fn of_case(study: &Study, now: &Now) -> Vec<Caution> {
     trapping(study, &settings, &mut all);
     // Whether or not there may be a forecast: the last arterial gas speaks for itself.
     if let Some(gas) = study.history.arterial_gases().last().filter(|g| g.gas.ph < s::CALL_PH.value) {
-        all.push(caution("call", format!("pH {:.2}: call for help now.", gas.gas.ph), Some(&s::CALL_PH)));
+        let words = format!("Last gas: pH {:.2}. Call for help now.", gas.gas.ph);
+        all.push(caution("call", words, Some(&s::CALL_PH)));
     }
     if let Some(learnt) = study.learnt() {
         gas_cautions(study, learnt, &mut all);
@@ -204,4 +205,18 @@ pub(crate) fn broken_limits(price: &Price) -> Vec<Caution> {
         all.push(caution("ml_per_kg", words, Some(&s::VT_LUNG_MOST)));
     }
     all
+}
+
+/// Where it is heading, when that could hurt.
+pub(crate) fn of_heading(settled: &Settled) -> Vec<Caution> {
+    let ph = settled.ph.p50;
+    if ph < s::PH_BORNE.value {
+        let words = format!("pH would settle at about {ph:.2}, under {:.2}.", s::PH_BORNE.value);
+        return vec![caution("ph_low", words, Some(&s::PH_BORNE))];
+    }
+    if ph > s::PH_GOAL_HIGH.value {
+        let words = format!("pH would settle at about {ph:.2}, over {:.2}.", s::PH_GOAL_HIGH.value);
+        return vec![caution("ph_high", words, Some(&s::PH_GOAL_HIGH))];
+    }
+    vec![]
 }

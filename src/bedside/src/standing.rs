@@ -119,7 +119,7 @@ pub(crate) fn standing_of(settings: &Settings) -> Standing {
         (Way::NoCurve, _) => withheld(
             "no_curve",
             "Mask, bag, own breathing or a leak: how much reaches the lung isn't known. No forecast.",
-            "Draw a gas 30 to 60 min after a change. Watch drowsiness, rate and effort. Don't sedate to settle him.",
+            "Draw a gas 30 to 60 min after a change. Watch drowsiness, rate and effort. Don't sedate to settle the patient.",
         ),
         (Way::NotSaid, _) => {
             withheld("how_he_breathes", "How he breathes was not typed.", "Type the settings.")

@@ -208,6 +208,9 @@ impl Study {
             answer.standing = answer.standing.and(beyond);
             return answer;
         }
+        // Under the dangers of the change itself, over its limits.
+        let place = answer.cautions.iter().take_while(|caution| caution.is_danger()).count();
+        answer.cautions.splice(place..place, cautions::of_heading(&forecast.settled));
         answer.value = Some(forecast);
         answer
     }

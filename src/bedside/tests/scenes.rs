@@ -330,3 +330,17 @@ fn an_entry_that_could_hide_a_change_silences_it() {
         assert!(answer.cautions.iter().any(|c| c.id == "not_understood"));
     }
 }
+
+#[test]
+fn a_change_that_leads_to_a_dangerous_ph_says_so_first() {
+    let study = Study::new(&night_ferry(), Options::default());
+    let slow = Settings { rate_per_min: Some(9.0), ..Settings::default() };
+    let answer = study.forecast(&now(5.0), Some(&slow), &[]);
+    assert_eq!(answer.cautions[0].id, "ph_low", "{:?}", answer.cautions);
+    assert!(answer.cautions[0].comes_first());
+    let fast = Settings { rate_per_min: Some(35.0), tidal_volume_ml: Some(400.0), ..Settings::default() };
+    assert!(study.forecast(&now(5.0), Some(&fast), &[]).cautions.iter().any(|c| c.id == "ph_high"));
+    assert!(
+        study.forecast(&now(5.0), None, &[]).cautions.iter().all(|c| c.id != "ph_low" && c.id != "ph_high")
+    );
+}

@@ -19,6 +19,7 @@ figures! { BEDSIDE;
     RETAINER_PH_USUAL_HIGH = 7.38, 0.0, "1", "Upper end of a chronic retainer's own pH", "BTS/ICS, Davidson et al. Thorax 2016;71 S2", Opened;
     VT_LUNG_MOST = 8.0, 0.0, "mL/kg", "Tidal volume that lung-protective ventilation starts from", ARDSNET, Opened;
     METABOLIC_SBE = -8.0, 0.0, "mmol/L", "Standard base excess under which his own compensation is looked for", "Assumed", Assumed;
+    PH_BORNE = 7.15, 0.0, "1", "pH above which acidosis is usually well borne", "Common practice", CommonPractice;
     CALL_PH = 7.25, 0.0, "1", "pH under which to call for help", "Gathered from BTS guidance and ARDS Network's card", Computed;
     HCO3_CHECK = 0.10, 0.0, "1", "Difference of printed and computed HCO3 from which all three are asked about", "Assumed", Assumed;
     KPA_LIKELY_MOST = 20.0, 0.0, "1", "PaCO2 figure up to which mmHg and kPa are asked about", "Assumed", Assumed;
