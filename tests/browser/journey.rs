@@ -1,8 +1,10 @@
 //! The invented case "Night ferry" by its visible labels: from opening the page to a written change, with taps and digits
 //! counted; once more with the server stopped; and after a crash.
 
-use crate::harness::{Effort, Phone, Setup};
+use crate::harness::{Phone, Setup};
+use crate::steps::{about, first_answer};
 use anyhow::{Context, Result, ensure};
+use serde_json::json;
 use std::time::Duration;
 use tokio::time::sleep;
 
@@ -19,33 +21,6 @@ const ROOMS: [(&str, &str); 7] = [
     ("#/record", "Record"),
     ("#/person", "Case"),
 ];
-
-/// From the first screen to the first answer; from the second case on the button that writes names the case.
-async fn first_answer(phone: &Phone, way_in: &str, answer: &str) -> Result<Effort> {
-    phone.effort();
-    phone.tap(way_in).await?;
-    phone.tap("arterial").await?;
-    phone.tap("now").await?;
-    phone.type_digits("721").await?;
-    phone.tap("Next").await?;
-    phone.type_digits("71").await?;
-    phone.tap("SETTINGS").await?;
-    phone.tap("machine, volume set").await?;
-    phone.type_digits("340").await?;
-    phone.tap("Next").await?;
-    phone.type_digits("18").await?;
-    phone.tap(answer).await?;
-    phone.wait_for_text("PaCO₂ now").await?;
-    Ok(phone.effort())
-}
-
-/// The figure behind the first ≈ that follows a text.
-fn about(text: &str, after: &str) -> Result<f64> {
-    let (_, rest) = text.split_once(after).with_context(|| format!("{after:?} is not in {text:?}"))?;
-    let (_, figure) = rest.split_once('≈').with_context(|| format!("no ≈ behind {after:?} in {text:?}"))?;
-    let digits: String = figure.chars().take_while(|sign| sign.is_ascii_digit() || *sign == '.').collect();
-    digits.trim_end_matches('.').parse().with_context(|| format!("no figure behind ≈ in {figure:?}"))
-}
 
 /// What the first answer must say: where PaCO2 is and how sure that is, where it settles, and when.
 async fn reads_the_answer(phone: &Phone) -> Result<()> {
@@ -136,6 +111,9 @@ fn night_ferry_in_the_dark() {
         phone.open("").await?;
         phone.wait_until("matchMedia('(prefers-color-scheme: dark)').matches").await?;
         first_answer(phone, "TYPE A GAS", "ANSWER").await?;
+        let night = "const page = getComputedStyle(document.documentElement); return [page.backgroundColor, page.color]";
+        let colours = phone.script(night, vec![]).await?;
+        assert_eq!(colours, json!(["rgb(13, 23, 34)", "rgb(235, 228, 211)"]), "paper and ink by night");
         phone.shot("night-now").await?;
         phone.open("#/change").await?;
         phone.wait_for_text("settles at").await?;

@@ -6,9 +6,12 @@
 mod harness;
 
 mod blocked;
+mod expiry;
 mod first_visit;
 mod journey;
 mod narrow;
 mod no_signal;
 mod served;
+mod slips;
+mod steps;
 mod update;

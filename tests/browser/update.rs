@@ -19,7 +19,7 @@ async fn deploy(world: &Arc<World>, version: &str) -> Result<()> {
 }
 
 async fn take(world: &Arc<World>, version: &str) -> Result<()> {
-    world.phone.script("window.slackwaterUpdate()", vec![]).await?;
+    world.phone.tap("Load it").await?;
     world.phone.wait_for_state("version", version).await?;
     world.phone.wait_until_started().await?;
     world.phone.wait_for_state("offline", "ready").await

@@ -5,6 +5,7 @@ use anyhow::{Context, Result, ensure};
 use base64::Engine;
 use base64::engine::general_purpose::STANDARD;
 use sha2::{Digest, Sha256};
+use std::env;
 use std::fs;
 use std::path::{Path, PathBuf};
 use tempfile::TempDir;
@@ -13,10 +14,14 @@ use tempfile::TempDir;
 pub struct SiteCopy(TempDir);
 
 impl SiteCopy {
-    /// Copies `dist/`.
+    /// Copies `dist/`, or the folder that `SLACKWATER_DIST` names.
     pub fn of_dist() -> Result<Self> {
-        let dist = root().join("dist");
-        ensure!(dist.join("sw.js").is_file(), "dist/ holds no built site: run `cargo xtask build`");
+        let dist = env::var_os("SLACKWATER_DIST").map_or_else(|| root().join("dist"), PathBuf::from);
+        ensure!(
+            dist.join("sw.js").is_file(),
+            "{} holds no built site: run `cargo xtask build`",
+            dist.display()
+        );
         let copy = tempfile::tempdir()?;
         copy_folder(&dist, copy.path())?;
         Ok(Self(copy))

@@ -6,6 +6,11 @@ use wasm_bindgen::{JsCast, JsValue};
 use wasm_bindgen_futures::JsFuture;
 use web_sys::{Blob, BlobPropertyBag, HtmlAnchorElement, HtmlInputElement, Url, js_sys::Array};
 
+use super::clock;
+
+/// Some browsers fetch the file only after they have asked where to: so long its address stays good.
+const SAVED_WITHIN_MS: u64 = 60_000;
+
 /// Offers `text` for saving as `name`.
 ///
 /// # Errors
@@ -20,7 +25,11 @@ pub fn download(name: &str, text: &str) -> Result<(), JsValue> {
     anchor.set_href(&address);
     anchor.set_download(name);
     anchor.click();
-    Url::revoke_object_url(&address)
+    let _ = clock::after(SAVED_WITHIN_MS, move || {
+        // Refused only for an address that is gone already.
+        let _ = Url::revoke_object_url(&address);
+    });
+    Ok(())
 }
 
 /// Reads the file chosen in `input` and hands on its text, or `Err(bytes)` when it is larger than `most`

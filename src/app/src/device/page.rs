@@ -1,6 +1,6 @@
 //! The page itself: its address, title, and where the focus stands.
 
-use leptos::ev::hashchange;
+use leptos::ev::{beforeunload, hashchange, storage, visibilitychange};
 use leptos::prelude::*;
 use wasm_bindgen::JsCast;
 use web_sys::{HtmlElement, HtmlInputElement, ScrollIntoViewOptions, ScrollLogicalPosition};
@@ -25,6 +25,29 @@ pub fn go_instead(hash: &str) {
 pub fn on_hash(act: impl Fn(String) + 'static) {
     // Dropping the handle leaves the listener in place: it lives as long as the page.
     let _ = window_event_listener(hashchange, move |_| act(hash()));
+}
+
+/// Has the browser ask before the page is left while `lose` says that something would be lost.
+pub fn before_leaving(lose: impl Fn() -> bool + 'static) {
+    let _ = window_event_listener(beforeunload, move |event| {
+        if lose() {
+            event.prevent_default();
+        }
+    });
+}
+
+/// Calls `act` with the key that another tab stored under; with none when it emptied the storage.
+pub fn on_stored(act: impl Fn(Option<String>) + 'static) {
+    let _ = window_event_listener(storage, move |event| act(event.key()));
+}
+
+/// Calls `act` whenever the page is looked at again.
+pub fn on_seen(act: impl Fn() + 'static) {
+    let _ = window_event_listener(visibilitychange, move |_| {
+        if !document().hidden() {
+            act();
+        }
+    });
 }
 
 /// Names the page for the tab and for screen readers.

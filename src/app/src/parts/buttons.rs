@@ -14,7 +14,8 @@ pub fn press(mut act: impl FnMut() + 'static) -> Press {
     Box::new(move |_| act())
 }
 
-/// The main button: what it does, and a line under it where there is one.
+/// The main button: what it does, and a line under it where there is one. It lies in the same place in every
+/// room, so it takes no press just after a room was entered.
 pub fn main_button(
     app: App,
     label: fn(App) -> String,
@@ -22,7 +23,13 @@ pub fn main_button(
     act: fn(App),
 ) -> AnyView {
     view! {
-        <button type="button" id="main-button" class="main-button" on:click=press(move || act(app))>
+        <button
+            type="button"
+            id="main-button"
+            class="main-button"
+            disabled=move || !app.settled.get()
+            on:click=press(move || act(app))
+        >
             <span class="main-label">{move || label(app)}</span>
             <span class="main-more">{move || more(app).unwrap_or_default()}</span>
         </button>

@@ -22,7 +22,7 @@ pub struct Form {
     /// What is asked before it is written.
     pub ask: fn(App) -> Vec<Question>,
     /// The field that Mend it leads to.
-    pub mend: Field,
+    pub mend: fn(&Question) -> Field,
     /// Writes it, or goes on.
     pub press: fn(App),
 }
@@ -94,6 +94,12 @@ pub fn next(app: App, form: Form) {
     if !app.says_wrong(field) {
         lead_on(app, form, Place::Number(field));
     }
+}
+
+/// Whether a form could be written as it stands.
+pub fn is_ready(app: App, form: Form) -> bool {
+    let faults = untrack(|| app.sheet.with(|sheet| rows::faults(sheet, &(form.rows)(app), app.group())));
+    faults.is_empty() && untrack(|| (form.ask)(app)).is_empty()
 }
 
 /// Whether the form may be written; if not, says why and goes to the first fault or question.

@@ -2,7 +2,7 @@
 
 use leptos::prelude::*;
 
-use super::html::{tag, text};
+use super::html::{said, tag, text};
 use crate::state::app::App;
 use crate::state::room::Room;
 use crate::words::{change, form, header as words, now, person, record, start, values};
@@ -42,28 +42,35 @@ pub fn header(app: App) -> AnyView {
         let label = app.label().filter(|_| !on_sheet);
         label.map(|label| link("header-link header-case", Room::Person, &words::case(&label), &label))
     };
-    let left = move || {
+    let left = Memo::new(move |_| {
         if main() {
             return case_link().unwrap_or_default();
         }
         let back = back(app.room.get(), app.open.with(Option::is_some));
         back.map(|room| link("header-link", room, words::BACK, words::BACK)).unwrap_or_default()
-    };
-    let right = move || {
-        if !main() {
-            return case_link().unwrap_or_default();
+    });
+    // The links stand apart from the time and are drawn anew only when they are others, so that the focus on one
+    // is not lost each minute.
+    let right = Memo::new(move |_| {
+        if main() {
+            link("header-link", Room::Record, record::TITLE, record::TITLE)
+        } else {
+            case_link().unwrap_or_default()
         }
+    });
+    let time = move || {
         let now = app.now.get();
-        tag("span", &[("class", "header-time")], &text(&values::clock(now.wall, &now)))
-            + &link("header-link", Room::Record, record::TITLE, record::TITLE)
+        let clock = main().then(|| said("span", "header-time", &values::clock(now.wall, &now)));
+        clock.unwrap_or_default()
     };
     view! {
         <header class="header">
-            <div class="header-side" inner_html=move || left()></div>
+            <div class="header-side" inner_html=move || left.get()></div>
             <h1 id="room-title" tabindex="-1" class=move || if main() { "unseen" } else { "" }>
                 {move || title(app.room.get()).to_owned()}
             </h1>
-            <div class="header-side" inner_html=move || right()></div>
+            <div class="header-side" inner_html=move || time()></div>
+            <div class="header-side" inner_html=move || right.get()></div>
         </header>
     }
     .into_any()

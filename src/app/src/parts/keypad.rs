@@ -118,7 +118,7 @@ fn type_key(app: App, key: Key) {
     let Some(field) = app.active.get_untracked() else { return };
     let text = app.sheet.with_untracked(|sheet| sheet.text(field).to_owned());
     match pressed(&text, key, field.spec().keys) {
-        Ok(text) => app.sheet.update(|sheet| sheet.set_text(field, text)),
+        Ok(text) => app.type_text(field, text),
         Err(words) => app.tell(words),
     }
 }
@@ -128,7 +128,7 @@ fn paste(app: App) {
     files::pasted(move |text| match text.as_deref().map(str::trim) {
         Some(text) if !text.is_empty() => {
             let text: String = text.chars().take(16).collect();
-            app.sheet.update(|sheet| sheet.set_text(field, text));
+            app.type_text(field, text);
             // What was pasted is judged at once: nobody goes on typing it.
             app.leave(field);
         }

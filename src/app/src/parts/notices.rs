@@ -3,15 +3,20 @@
 use leptos::prelude::*;
 
 use super::buttons::plain;
-use crate::device::ready;
 use crate::state::app::App;
-use crate::words::start as words;
+use crate::state::room::Room;
+use crate::words::{record, start as words};
 
 /// The notices that apply now.
 pub fn notices(app: App) -> AnyView {
     let unsaved = move || match app.unsaved() {
         0 => String::new(),
         count => words::unsaved(count),
+    };
+    // It stays as long as the text does: the forecast goes on doing without it.
+    let aside = move || match app.set_aside().len() {
+        0 => String::new(),
+        count => words::set_aside(count),
     };
     let demo = move || app.label().is_some_and(|label| label == words::DEMO_LABEL);
     view! {
@@ -22,8 +27,14 @@ pub fn notices(app: App) -> AnyView {
             <p class="notice notice-trouble" role="alert" hidden=move || unsaved().is_empty()>
                 {move || unsaved()}
             </p>
+            <p class="notice notice-trouble" role="alert" hidden=move || !app.draft_lost.get()>
+                {words::DRAFT_LOST}
+            </p>
+            <p class="notice notice-trouble" hidden=move || aside().is_empty()>
+                {move || aside()} " " <a href=Room::Record.hash()>{record::TITLE}</a>
+            </p>
             <div class="notice" hidden=move || app.update.get() != "ready">
-                {words::NEW_VERSION} {plain(words::TAKE_IT.to_owned(), ready::take_update)}
+                {words::NEW_VERSION} {plain(words::TAKE_IT.to_owned(), move || app.take_update())}
             </div>
             <p class="notice" hidden=move || !demo()>{words::DEMO_OPEN}</p>
         </div>

@@ -23,7 +23,7 @@ pub fn number_field(
     let unit = move || app.sheet.with(|sheet| sheet.unit(field, app.group())).to_owned();
     let class = move || if app.active.get() == Some(field) { "field number active" } else { "field number" };
     let unit_view = if field.takes_kpa() {
-        let change = move || app.sheet.update(|sheet| sheet.kpa = !sheet.kpa);
+        let change = move || app.sheet.update(|sheet| sheet.set_unit(field, !sheet.in_kpa(field)));
         view! {
             <button type="button" class="unit unit-button" on:click=press(change)>
                 {move || unit()}
@@ -54,7 +54,7 @@ pub fn number_field(
                 on:blur=leaving(app, field)
             />
             {unit_view}
-            {error(spec.fault_id, fault)}
+            {error(Some(spec.fault_id), fault)}
         </div>
     }
     .into_any()
@@ -69,7 +69,7 @@ pub fn input_mode(app: App) -> &'static str {
 pub fn typing(app: App, field: Field) -> Box<dyn FnMut(leptos::ev::Event)> {
     Box::new(move |event| {
         if let Some(input) = page::input(&event) {
-            app.sheet.update(|sheet| sheet.set_text(field, input.value()));
+            app.type_text(field, input.value());
         }
     })
 }

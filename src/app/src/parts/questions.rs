@@ -7,6 +7,8 @@ use super::buttons::plain;
 use super::form::Form;
 use crate::device::page;
 use crate::state::app::App;
+use crate::state::asks::unit_of;
+use crate::state::field::Field;
 use crate::words::form as words;
 use crate::words::spoken::spoken;
 
@@ -33,22 +35,33 @@ pub fn questions(app: App, form: Form) -> AnyView {
 
 fn one(app: App, question: Question, form: Form) -> AnyView {
     let said = question.words.clone();
-    let as_typed = move || {
-        app.sheet.update(|sheet| sheet.answered.push(said.clone()));
-        (form.press)(app);
+    let answer = move |unit: Option<(Field, bool)>| {
+        let said = said.clone();
+        move || {
+            app.sheet.update(|sheet| {
+                if let Some((field, kpa)) = unit {
+                    sheet.set_unit(field, kpa);
+                }
+                sheet.answered.push(said.clone());
+            });
+            (form.press)(app);
+        }
     };
     let answers = match question.kind {
         QuestionKind::MmhgOrKpa { typed, as_kpa_mmhg } => {
-            let in_kpa = move || {
-                app.sheet.update(|sheet| sheet.kpa = true);
-                (form.press)(app);
-            };
-            vec![plain(words::is_mmhg(typed), as_typed), plain(words::is_kpa(typed, as_kpa_mmhg), in_kpa)]
+            let field = unit_of(&question);
+            vec![
+                plain(words::is_mmhg(typed), answer(Some((field, false)))),
+                plain(words::is_kpa(typed, as_kpa_mmhg), answer(Some((field, true)))),
+            ]
         }
-        QuestionKind::Hco3Contradicts { .. } | QuestionKind::Unusual => vec![
-            plain(words::AS_TYPED.to_owned(), as_typed),
-            plain(words::MEND_IT.to_owned(), move || page::focus(form.mend.spec().id)),
-        ],
+        QuestionKind::Hco3Contradicts { .. } | QuestionKind::Unusual => {
+            let field = (form.mend)(&question);
+            vec![
+                plain(words::AS_TYPED.to_owned(), answer(None)),
+                plain(words::MEND_IT.to_owned(), move || page::focus(field.spec().id)),
+            ]
+        }
     };
     let name = spoken(&question.words);
     view! {

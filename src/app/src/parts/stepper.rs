@@ -103,7 +103,7 @@ pub fn stepper(app: App, steps: Steps, next: fn(App)) -> AnyView {
                 <span class="unit">{limit.unit}</span>
             </span>
             {key(look("+", words::more(limit.label)), Box::new(move || move_by(by)))}
-            {error(spec.fault_id, fault)}
+            {error(Some(spec.fault_id), fault)}
         </div>
     }
     .into_any()

@@ -3,7 +3,7 @@
 use std::cell::Cell;
 use std::rc::Rc;
 
-use bedside::Caution;
+use bedside::{Caution, Question, ask_about_entry};
 use case::{Control, EntryKind, Settings};
 use leptos::prelude::*;
 use send_wrapper::SendWrapper;
@@ -13,10 +13,13 @@ use crate::parts::buttons::{main_button, press};
 use crate::parts::cautions;
 use crate::parts::chart::{Compared, Picture, drawing, reading};
 use crate::parts::figure::figure;
+use crate::parts::form::{Form, may_write};
 use crate::parts::html::{element, said};
 use crate::parts::keypad::keypad;
+use crate::parts::questions::questions;
 use crate::parts::stepper::{Steps, stepper};
 use crate::state::app::App;
+use crate::state::asks::mends_change;
 use crate::state::field::Field;
 use crate::state::outlook;
 use crate::state::present::Trial;
@@ -31,6 +34,10 @@ const CHART_HEIGHT: f64 = 176.0;
 const SAID_AFTER_MS: u64 = 700;
 /// Millilitres of one step of the tidal volume.
 const VOLUME_STEP_ML: f64 = 10.0;
+
+/// What is asked before a change is written; the steppers say themselves what is wrong in them.
+const FORM: Form =
+    Form { rows: |_| vec![], hint: |_, _| None, ask: unusual, mend: mends_change, press: write };
 
 /// The room.
 pub fn change(app: App) -> AnyView {
@@ -49,6 +56,7 @@ pub fn change(app: App) -> AnyView {
             <section class="answer" inner_html=move || heed(true) + &answered()></section>
             <div class="chart-side">{drawing(app, picture, at)}</div>
             <section class="change-side">
+                {questions(app, FORM)}
                 <div inner_html=move || costs()></div>
                 <div inner_html=move || heed(false)></div>
                 <button type="button" class="plain" hidden=move || !changed() on:click=press(move || undo(app))>
@@ -193,6 +201,12 @@ fn more(app: App) -> Option<String> {
     })
 }
 
+/// The questions about the change that were not answered yet.
+fn unusual(app: App) -> Vec<Question> {
+    let change = app.trial.with(|trial| trial.as_ref().map(|t| t.change)).unwrap_or_default();
+    app.unanswered(ask_about_entry(&app.case(), &EntryKind::Settings(change)))
+}
+
 fn undo(app: App) {
     app.sheet.update(|sheet| sheet.clear(&[Field::NewRate, Field::NewVolume], &[]));
     app.active.set(None);
@@ -208,6 +222,9 @@ fn write(app: App) {
         app.trial.with_untracked(|trial| trial.as_ref().map(|t| t.change)).unwrap_or_default();
     if change.is_empty() {
         app.tell(words::STEP_FIRST);
+        return;
+    }
+    if !may_write(app, FORM) {
         return;
     }
     let now = app.tick();

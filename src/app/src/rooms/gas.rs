@@ -1,6 +1,6 @@
 //! Typing a gas.
 
-use bedside::{Question, ask_about_entry};
+use bedside::Question;
 use case::{EntryKind, Moment};
 use leptos::prelude::*;
 
@@ -9,15 +9,21 @@ use crate::parts::buttons::{main_button, perhaps, plain};
 use crate::parts::form::{Form, form, may_write, next};
 use crate::parts::keypad::keypad;
 use crate::state::app::App;
+use crate::state::asks;
 use crate::state::choice::Choice;
-use crate::state::field::Field;
 use crate::state::room::Room;
-use crate::state::rows::gas_rows;
+use crate::state::rows::{GAS_CHOICES, GAS_FIELDS, gas_rows};
 use crate::state::writing;
 use crate::words::form as words;
 
-const FORM: Form =
-    Form { rows: |app| app.sheet.with(gas_rows), hint: |_, _| None, ask: questions, mend: Field::Ph, press };
+/// The form, which Settings looks at too before it writes the gas.
+pub const FORM: Form = Form {
+    rows: |app| app.sheet.with(gas_rows),
+    hint: |_, _| None,
+    ask: questions,
+    mend: asks::mends_gas,
+    press,
+};
 
 /// The room.
 pub fn gas(app: App) -> AnyView {
@@ -60,8 +66,12 @@ fn more(app: App) -> Option<String> {
 
 /// The questions about the gas as typed that were not answered yet.
 fn questions(app: App) -> Vec<Question> {
-    let gas = app.sheet.with(|sheet| writing::gas(sheet, app.group(), None));
-    gas.map(|gas| app.unanswered(ask_about_entry(&app.case(), &EntryKind::Gas(gas)))).unwrap_or_default()
+    let now = app.now.get();
+    let asked = app.sheet.with(|sheet| {
+        let gas = writing::gas(sheet, app.group(), None)?;
+        Some(asks::about_gas(sheet, &app.case(), &gas, &now))
+    });
+    app.unanswered(asked.unwrap_or_default())
 }
 
 fn press(app: App) {
@@ -72,15 +82,15 @@ fn press(app: App) {
         page::go(Room::Settings.hash());
         return;
     }
-    let now = app.tick();
+    app.tick();
     let since = untrack(|| settings_since(app));
-    let drawn = app.sheet.with_untracked(|sheet| sheet.moment(Choice::Drawn, &now));
-    let held = drawn.zip(since).map(|(drawn, since)| drawn.minutes_since(since)).filter(|held| *held >= 0.0);
+    let drawn = app.sheet.with_untracked(|sheet| sheet.moment(Choice::Drawn));
+    let held = drawn.zip(since).and_then(|(drawn, since)| writing::held_min(since, drawn));
     let gas = untrack(|| app.sheet.with(|sheet| writing::gas(sheet, app.group(), held)));
     if let Some((at, gas)) = drawn.zip(gas)
         && app.write(vec![(at, EntryKind::Gas(gas))])
     {
-        app.clear_typed();
+        app.clear_typed(&GAS_FIELDS, &GAS_CHOICES);
         page::go_instead(Room::Now.hash());
     }
 }

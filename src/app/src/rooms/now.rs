@@ -6,7 +6,7 @@ mod narrow;
 mod offers;
 
 use bedside::{Freshness, Status};
-use case::{EntryKind, Gas, Moment};
+use case::{Case, EntryId, EntryKind, Gas, GasChoice, Moment};
 use leptos::prelude::*;
 
 use crate::device::page;
@@ -118,7 +118,65 @@ fn write_unchanged(app: App) {
     app.write(vec![(now.wall, EntryKind::Unchanged)]);
 }
 
-/// The last gas of the case.
+/// The last gas of the case that nobody has called a bad sample.
 fn last_gas(app: App) -> Option<(Gas, Moment)> {
-    app.case().gases().last().map(|(_, at, gas)| (*gas, *at))
+    last_believed(&app.case())
+}
+
+fn last_believed(case: &Case) -> Option<(Gas, Moment)> {
+    let entries = case.resolved();
+    let left_out = |id: &EntryId| {
+        let verdict = entries.iter().rev().find_map(|entry| match &entry.kind {
+            EntryKind::GasVerdict(verdict) if verdict.of == *id => Some(verdict.choice),
+            _ => None,
+        });
+        verdict == Some(GasChoice::Sample)
+    };
+    case.gases().into_iter().rev().find(|(id, ..)| !left_out(id)).map(|(_, at, gas)| (gas, at))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use case::{Entry, GasVerdict, Site};
+
+    fn entry(id: &str, minute: i64, kind: EntryKind) -> Entry {
+        Entry {
+            id: EntryId(id.into()),
+            at: Moment(minute * 60_000),
+            written_at: None,
+            utc_offset_min: None,
+            kind,
+            not_understood: vec![],
+        }
+    }
+
+    fn gas(pco2_mmhg: f64) -> EntryKind {
+        EntryKind::Gas(Gas {
+            site: Site::Arterial,
+            ph: 7.3,
+            pco2_mmhg,
+            po2_mmhg: None,
+            hco3_printed_mmol_l: None,
+            hb_g_dl: None,
+            temperature_c: None,
+            reported_at_c: None,
+            analysed_at: None,
+            settings_held_min: None,
+        })
+    }
+
+    #[test]
+    fn a_rejected_sample_is_not_the_last_measured() {
+        let mut case = Case::new("x");
+        case.add(entry("a", 0, gas(71.0))).unwrap();
+        case.add(entry("b", 20, gas(40.0))).unwrap();
+        let last = |case: &Case| last_believed(case).map(|(gas, _)| gas.pco2_mmhg);
+        assert_eq!(last(&case), Some(40.0));
+        let say = |choice| EntryKind::GasVerdict(GasVerdict { of: EntryId("b".into()), choice });
+        case.add(entry("c", 21, say(GasChoice::Sample))).unwrap();
+        assert_eq!(last(&case), Some(71.0));
+        case.add(entry("d", 22, say(GasChoice::Patient))).unwrap();
+        assert_eq!(last(&case), Some(40.0), "the latest word about it counts");
+    }
 }

@@ -18,8 +18,13 @@ use crate::state::rows::PERSON_ROWS;
 use crate::state::writing;
 use crate::words::person as words;
 
-const FORM: Form =
-    Form { rows: |_| PERSON_ROWS.to_vec(), hint: |_, _| None, ask: |_| vec![], mend: Field::Label, press };
+const FORM: Form = Form {
+    rows: |_| PERSON_ROWS.to_vec(),
+    hint: |_, _| None,
+    ask: |_| vec![],
+    mend: |_| Field::Label,
+    press,
+};
 
 /// The room.
 pub fn person(app: App) -> AnyView {
@@ -65,7 +70,7 @@ fn label_field(app: App) -> AnyView {
                 on:focus=move |_| app.active.set(None)
             />
             <p class="hint" id="label-hint">{words::LABEL_HINT}</p>
-            {error(spec.fault_id, fault)}
+            {error(Some(spec.fault_id), fault)}
         </div>
     }
     .into_any()

@@ -11,7 +11,7 @@ use send_wrapper::SendWrapper;
 use units::AgeGroup;
 
 use super::present::{Present, Trial};
-use super::{draft, field::Field, room::Room, sheet::Reading, sheet::Sheet, writing};
+use super::{field::Field, room::Room, sheet::Reading, sheet::Sheet, writing};
 use crate::device::{clock, page, ready, shelf::LocalShelf};
 use crate::words::start as words;
 
@@ -30,6 +30,8 @@ pub struct App {
     pub(super) book: StoredValue<Book<LocalShelf>, LocalStorage>,
     pub(super) shelf: StoredValue<LocalShelf, LocalStorage>,
     pub(super) revision: RwSignal<usize>,
+    /// The case this tab has open: another tab may open another.
+    pub(super) chosen: StoredValue<Option<CaseId>>,
     /// The open case; the same until something is written.
     pub open: Memo<Option<Open>>,
     /// What the study says at this minute.
@@ -48,8 +50,14 @@ pub struct App {
     pub left: RwSignal<usize>,
     /// Whether the gas, the settings or the sheet were asked to be written, so that what is missing is said.
     pub asked: RwSignal<bool>,
-    /// What a screen reader is told, politely.
+    /// What a screen reader is told, politely; empty again soon after.
     pub told: RwSignal<String>,
+    tellings: StoredValue<usize>,
+    /// Whether the room has stood long enough for its main button to be meant by a press.
+    pub settled: RwSignal<bool>,
+    entrances: StoredValue<usize>,
+    /// Whether the draft could not be kept.
+    pub draft_lost: RwSignal<bool>,
     /// What went wrong, until it is put right; empty when nothing did.
     pub trouble: RwSignal<String>,
     /// Whether the phone's own keypad is used.
@@ -62,6 +70,10 @@ pub struct App {
 
 /// After so many minutes without an entry a button that writes asks whether it is still this case.
 const AWAY_MIN: f64 = 30.0;
+/// A press this soon after a room was entered belongs to the room before: the second tap of two.
+const MEANT_AFTER_MS: u64 = 600;
+/// What was said stands as long as a screen reader needs to take it up; later it would be read as if it were news.
+const TOLD_FOR_MS: u64 = 5_000;
 const PHONE_KEYS: &str = "slackwater.phone-keys";
 
 impl App {
@@ -75,13 +87,15 @@ impl App {
         });
         let book = book.unwrap_or_else(|error| unreachable!("an empty shelf opens: {error}"));
         let phone_keys = matches!(shelf.get(PHONE_KEYS), Ok(Some(text)) if text == "yes");
+        let chosen = StoredValue::new(book.open_case().map(|(id, _)| id.clone()));
         let book = StoredValue::new_local(book);
         let revision = RwSignal::new(0);
         let open = Memo::new(move |_| {
             revision.track();
             book.with_value(|book| {
-                let (id, case) = book.open_case()?;
-                Some(Open { id: id.clone(), case: Arc::new(case.clone()) })
+                let id = chosen.get_value()?;
+                let case = Arc::new(book.file(&id)?.case.clone());
+                Some(Open { id, case })
             })
         });
         let study = Memo::new_with_compare(
@@ -92,7 +106,7 @@ impl App {
         let sheet = RwSignal::new(Sheet::default());
         let present = Memo::new(move |_| {
             let now = now.get();
-            study.with(|study| open.with(|o| Some(Present::of(study.as_ref()?, &o.as_ref()?.case, &now))))
+            study.with(|study| Some(Present::of(study.as_ref()?, &now)))
         });
         let trial = Memo::new(move |_| {
             let now = now.get();
@@ -103,7 +117,7 @@ impl App {
                         let in_force = case.settings_at(now.wall);
                         in_force.airway?;
                         let change = writing::change(sheet, &in_force, case.person.age_group());
-                        Some(Trial::of(study.as_ref()?, case, &now, &in_force, change))
+                        Some(Trial::of(study.as_ref()?, &now, &in_force, change))
                     })
                 })
             })
@@ -112,6 +126,7 @@ impl App {
             book,
             shelf: StoredValue::new_local(shelf),
             revision,
+            chosen,
             open,
             present,
             trial,
@@ -122,6 +137,10 @@ impl App {
             left: RwSignal::new(0),
             asked: RwSignal::new(false),
             told: RwSignal::new(String::new()),
+            tellings: StoredValue::new(0),
+            settled: RwSignal::new(true),
+            entrances: StoredValue::new(0),
+            draft_lost: RwSignal::new(false),
             trouble: RwSignal::new(trouble),
             phone_keys: RwSignal::new(phone_keys),
             offline: ready::offline(),
@@ -130,6 +149,9 @@ impl App {
         app.sheet.set(app.kept_draft());
         app.room.set(app.room_at(&page::hash()));
         app.enter(&page::hash());
+        if app.room.get_untracked() != Room::Change {
+            app.forget_trial();
+        }
         app
     }
 
@@ -139,12 +161,7 @@ impl App {
         clock::each_minute(move |now| {
             self.now.try_set(now);
         });
-        Effect::new(move |before: Option<()>| {
-            let text = self.sheet.with(draft::to_text);
-            if before.is_some() {
-                self.keep_draft(text);
-            }
-        });
+        self.keep();
     }
 
     fn room_at(self, hash: &str) -> Room {
@@ -161,32 +178,37 @@ impl App {
             return;
         }
         let room = self.room_at(hash);
-        if self.room.get_untracked() != room {
+        let before = self.room.get_untracked();
+        if before != room {
+            if before == Room::Change {
+                self.forget_trial();
+            }
+            self.take_no_press_yet();
             self.active.set(None);
             self.left.set(0);
             self.asked.set(false);
-            self.now.set(clock::now());
+            let now = self.tick();
+            self.sheet.maybe_update(|sheet| sheet.age_chips(&now));
             self.room.set(room);
         }
     }
 
-    fn draft_key(self) -> String {
-        self.open.with_untracked(|open| draft::key(open.as_ref().map(|open| open.id.0.as_str())))
+    /// A change that was tried and not made is gone with the room: nobody remembers it at the next visit.
+    fn forget_trial(self) {
+        let tried = [Field::NewRate, Field::NewVolume];
+        if self.sheet.with_untracked(|sheet| sheet.any_text(&tried)) {
+            self.sheet.update(|sheet| sheet.clear(&tried, &[]));
+        }
     }
 
-    pub(super) fn kept_draft(self) -> Sheet {
-        let text = self.shelf.with_value(|shelf| shelf.get(&self.draft_key()));
-        text.ok().flatten().map_or_else(Sheet::default, |text| draft::from_text(&text))
-    }
-
-    /// A draft that can't be kept is still on the screen; the book says when storing fails.
-    pub(super) fn keep_draft(self, text: Option<String>) {
-        let key = self.draft_key();
-        self.shelf.update_value(|shelf| {
-            let _ = match text {
-                Some(text) => shelf.put(&key, &text),
-                None => shelf.remove(&key),
-            };
+    fn take_no_press_yet(self) {
+        self.settled.set(false);
+        self.entrances.update_value(|count| *count += 1);
+        let entrance = self.entrances.get_value();
+        let _ = clock::after(MEANT_AFTER_MS, move || {
+            if self.entrances.get_value() == entrance {
+                self.settled.set(true);
+            }
         });
     }
 
@@ -229,6 +251,11 @@ impl App {
         (now.wall.minutes_since(last) >= AWAY_MIN).then(|| crate::words::form::still(&label))
     }
 
+    /// What was typed or pasted goes into the sheet as it is; a clock time is fixed to its day.
+    pub fn type_text(self, field: Field, text: String) {
+        self.sheet.update(|sheet| sheet.type_text(field, text, &clock::now()));
+    }
+
     /// Reads the clock anew.
     pub fn tick(self) -> Now {
         let now = clock::now();
@@ -239,6 +266,13 @@ impl App {
     /// Tells a screen reader.
     pub fn tell(self, words: &str) {
         self.told.set(crate::words::spoken::spoken(words));
+        self.tellings.update_value(|count| *count += 1);
+        let telling = self.tellings.get_value();
+        let _ = clock::after(TOLD_FOR_MS, move || {
+            if self.tellings.get_value() == telling {
+                self.told.set(String::new());
+            }
+        });
     }
 
     /// The questions that were not answered yet, by their words: another figure asks anew.

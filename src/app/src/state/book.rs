@@ -5,7 +5,7 @@ use leptos::prelude::*;
 use logbook::{Book, BookError, CaseId};
 
 use super::app::App;
-use super::{demo, draft, field::Field, room::Room, rows, sheet::Sheet};
+use super::{choice::Choice, demo, field::Field, room::Room, sheet::Sheet};
 use crate::device::{clock, ids, page, shelf::LocalShelf};
 use crate::words::{person, start as words};
 
@@ -60,7 +60,10 @@ impl App {
         let Some(id) = self.open.with_untracked(|open| open.as_ref().map(|open| open.id.clone())) else {
             return false;
         };
-        entries.into_iter().all(|(at, kind)| self.write_one(&id, at, kind))
+        let done = entries.into_iter().all(|(at, kind)| self.write_one(&id, at, kind));
+        // With this one, earlier entries may have found room too: then the draft is kept again.
+        self.keep_draft();
+        done
     }
 
     fn write_one(self, case: &CaseId, at: Moment, kind: EntryKind) -> bool {
@@ -77,39 +80,56 @@ impl App {
         self.change(|book| book.append(case, entry))
     }
 
-    /// Starts a case, taking along what was typed for it.
-    pub fn new_case(self, label: Option<&str>) -> bool {
+    /// Starts a case, empty.
+    fn begin(self, label: Option<&str>) -> bool {
         let Some(id) = self.fresh_id() else { return false };
         let number = self.book.with_value(|book| book.cases().len()) + 1;
         let label = label.map_or_else(|| person::default_label(number), str::to_owned);
         let now = clock::now();
-        let first = self.open.with_untracked(Option::is_none);
-        if first {
-            self.keep_draft(None);
-        }
-        let done = self.change(|book| book.new_case(CaseId(id), &label, &now));
-        if first {
-            // What was typed before there was a case belongs to it now.
-            self.keep_draft(self.sheet.with_untracked(draft::to_text));
+        self.change_to(&CaseId(id), |book, id| book.new_case(id.clone(), &label, &now))
+    }
+
+    /// Does something to the book that opens the case `id` in it.
+    fn change_to(
+        self,
+        id: &CaseId,
+        act: impl FnOnce(&mut Book<LocalShelf>, &CaseId) -> Result<(), BookError>,
+    ) -> bool {
+        let before = self.chosen.get_value();
+        self.chosen.set_value(Some(id.clone()));
+        let done = self.change(|book| act(book, id));
+        if !done {
+            self.chosen.set_value(before);
+            self.revision.update(|revision| *revision += 1);
         }
         done
     }
 
-    /// Goes on to the next patient: a new case where one is open, else the draft of the first.
+    /// Starts the case that the sheet was typed for.
+    pub fn start_case(self) -> bool {
+        let done = self.begin(None);
+        if done {
+            self.adopt_first_draft();
+        }
+        done
+    }
+
+    /// Goes on to the next patient: a new case where one is open, with what was typed before there was any.
     pub fn start_another(self) -> bool {
         if self.open.with_untracked(Option::is_none) {
             return true;
         }
-        let done = self.new_case(None);
+        let done = self.begin(None);
         if done {
-            self.sheet.set(Sheet::default());
+            self.sheet.set(self.first_draft());
+            self.adopt_first_draft();
         }
         done
     }
 
     /// Opens another case with its own draft.
     pub fn select(self, id: &CaseId) {
-        if self.change(|book| book.select(id)) {
+        if self.change_to(id, Book::select) {
             self.sheet.set(self.kept_draft());
         }
     }
@@ -118,7 +138,7 @@ impl App {
     pub fn import(self, text: &str) -> bool {
         let Some(id) = self.fresh_id() else { return false };
         let now = clock::now();
-        let done = self.change(|book| book.import(CaseId(id), text, &now));
+        let done = self.change_to(&CaseId(id), |book, id| book.import(id.clone(), text, &now));
         if done {
             self.sheet.set(self.kept_draft());
         }
@@ -149,7 +169,7 @@ impl App {
 
     /// Opens the invented case, its times counted back from now.
     pub fn open_demo(self) {
-        if !self.new_case(Some(words::DEMO_LABEL)) {
+        if !self.begin(Some(words::DEMO_LABEL)) {
             return;
         }
         self.sheet.set(Sheet::default());
@@ -160,13 +180,9 @@ impl App {
         }
     }
 
-    /// Empties what was typed for a gas and for settings, after both were written.
-    pub fn clear_typed(self) {
-        self.sheet.update(|sheet| {
-            sheet.clear(&rows::GAS_FIELDS, &rows::GAS_CHOICES);
-            sheet.clear(&rows::SETTINGS_FIELDS, &rows::SETTINGS_CHOICES);
-            sheet.clear(&[Field::NewRate, Field::NewVolume], &[]);
-        });
+    /// Empties what was written; what was typed beside it and not written stays.
+    pub fn clear_typed(self, fields: &[Field], choices: &[Choice]) {
+        self.sheet.update(|sheet| sheet.clear(fields, choices));
         self.left.set(0);
         self.asked.set(false);
     }

@@ -30,12 +30,21 @@ pub struct ChoiceSpec {
     pub name: &'static str,
     /// Id of its group on the page.
     pub id: &'static str,
+    /// Id of the sentence that says what is wrong in it.
+    pub fault_id: &'static str,
     /// What is asked.
     pub label: &'static str,
     /// The chips.
     pub options: &'static [&'static str],
     /// Chips in one line of a phone.
     pub columns: u8,
+}
+
+/// The id of a group and that of its error.
+macro_rules! ids {
+    ($id:literal) => {
+        ($id, concat!($id, "-fault"))
+    };
 }
 
 /// Minutes ago that the chips of [`Choice::Drawn`] and [`Choice::Changed`] stand for; the last chip is the clock.
@@ -81,37 +90,37 @@ impl Choice {
     pub const fn spec(self) -> ChoiceSpec {
         const fn row(
             name: &'static str,
-            id: &'static str,
+            (id, fault_id): (&'static str, &'static str),
             label: &'static str,
             options: &'static [&'static str],
             columns: u8,
         ) -> ChoiceSpec {
-            ChoiceSpec { name, id, label, options, columns }
+            ChoiceSpec { name, id, fault_id, label, options, columns }
         }
         match self {
             Choice::Site => row(
                 "site",
-                "c-site",
+                ids!("c-site"),
                 "Sample from",
                 &["arterial", "arm vein", "central line", "capillary"],
                 2,
             ),
-            Choice::Drawn => row("drawn", "c-drawn", "Drawn", &TIMES, 3),
+            Choice::Drawn => row("drawn", ids!("c-drawn"), "Drawn", &TIMES, 3),
             Choice::Breathes => row(
                 "breathes",
-                "c-breathes",
+                ids!("c-breathes"),
                 "How the patient breathes",
                 &["machine, volume set", "machine, pressure set", "own breaths too", "mask", "unaided"],
                 2,
             ),
             Choice::OwnControl => {
-                row("own_control", "c-own", "The machine gives", &["volume", "pressure", "support"], 3)
+                row("own_control", ids!("c-own"), "The machine gives", &["volume", "pressure", "support"], 3)
             }
-            Choice::Leak => row("leak", "c-leak", "Leak", &["none", "small", "large"], 3),
-            Choice::Changed => row("changed", "c-changed", "Changed", &TIMES, 3),
-            Choice::Sex => row("sex", "c-sex", "Sex", &["female", "male"], 2),
+            Choice::Leak => row("leak", ids!("c-leak"), "Leak", &["none", "small", "large"], 3),
+            Choice::Changed => row("changed", ids!("c-changed"), "Changed", &TIMES, 3),
+            Choice::Sex => row("sex", ids!("c-sex"), "Sex", &["female", "male"], 2),
             Choice::HeightHow => {
-                row("height_how", "c-how", "Height is", &["measured", "stated", "guessed"], 3)
+                row("height_how", ids!("c-how"), "Height is", &["measured", "stated", "guessed"], 3)
             }
         }
     }

@@ -1,7 +1,7 @@
 //! The minutes that a forecast is asked at, and which of its values a screen shows.
 
 use bedside::{Answer, Forecast, Quantiles};
-use case::{Case, Moment, Now};
+use case::{Moment, Now};
 
 /// The farthest that the chart reaches back, minutes.
 const BACK_MIN: f64 = 90.0;
@@ -15,7 +15,7 @@ const AHEAD: [f64; 20] = [
 /// Minutes ahead that the table lists and the slider stops at.
 pub const LISTED: [f64; 10] = [0.0, 10.0, 20.0, 30.0, 40.0, 60.0, 90.0, 120.0, 180.0, 240.0];
 
-/// The minutes around now that a chart is drawn from: back to `start`, 240 ahead.
+/// The minutes around now that a chart is drawn from: back to the `start` of what was computed, 240 ahead.
 pub fn minutes(start: Option<Moment>, now: &Now) -> Vec<f64> {
     let back = start.map_or(0.0, |start| now.wall.minutes_since(start).min(BACK_MIN)).max(0.0);
     let steps = (1..).map(|n: u32| f64::from(n) * BACK_STEP_MIN as f64).take_while(|minute| *minute < back);
@@ -26,12 +26,6 @@ pub fn minutes(start: Option<Moment>, now: &Now) -> Vec<f64> {
     minutes.reverse();
     minutes.extend(AHEAD);
     minutes
-}
-
-/// Where the record starts: the first gas, or the first settings when they are earlier.
-pub fn start(case: &Case) -> Option<Moment> {
-    let gas = case.gases().first().map(|(_, at, _)| *at)?;
-    Some(case.settings_steps().first().map_or(gas, |(at, _)| gas.min(*at)))
 }
 
 /// PaCO2 and pH at `minute`, where the forecast was asked there.

@@ -1,7 +1,7 @@
 //! What the study says at this minute, and about a change that is tried.
 
 use bedside::{Answer, Caution, Forecast, Freshness, Offers, Price, Study};
-use case::{Case, Control, Now, Settings};
+use case::{Control, Now, Settings};
 
 use super::outlook;
 
@@ -26,8 +26,8 @@ pub struct Present {
 
 impl Present {
     /// Asks the study.
-    pub fn of(study: &Study, case: &Case, now: &Now) -> Self {
-        let minutes = outlook::minutes(outlook::start(case), now);
+    pub fn of(study: &Study, now: &Now) -> Self {
+        let minutes = outlook::minutes(study.start(), now);
         let mut present = Self {
             now: *now,
             freshness: study.freshness(now),
@@ -80,8 +80,8 @@ pub struct Trial {
 
 impl Trial {
     /// Asks the study.
-    pub fn of(study: &Study, case: &Case, now: &Now, in_force: &Settings, change: Settings) -> Self {
-        let minutes = outlook::minutes(outlook::start(case), now);
+    pub fn of(study: &Study, now: &Now, in_force: &Settings, change: Settings) -> Self {
+        let minutes = outlook::minutes(study.start(), now);
         let given = (!change.is_empty()).then_some(&change);
         Self {
             now: *now,

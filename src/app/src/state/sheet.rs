@@ -7,6 +7,12 @@ use super::choice::{CLOCK, Choice, MINUTES_AGO};
 use super::field::{Field, KeyStyle};
 use crate::words::form as words;
 
+/// The rows of time chips, each with its clock field.
+const TIMES: [(Choice, Field); 2] =
+    [(Choice::Drawn, Field::DrawnClock), (Choice::Changed, Field::ChangedClock)];
+/// A chip such as "now" is true for so many minutes after it was tapped.
+const CHIP_HOLDS_MIN: f64 = 5.0;
+
 /// Everything typed and not yet written.
 #[derive(Debug, Clone, PartialEq, Default)]
 pub struct Sheet {
@@ -16,8 +22,8 @@ pub struct Sheet {
     pub drawn_at: Option<Moment>,
     /// When the settings were changed, fixed when its chip was tapped.
     pub changed_at: Option<Moment>,
-    /// Whether gas pressures are typed in kPa.
-    pub kpa: bool,
+    /// Whether PCO2 and PO2 are typed in kPa.
+    pub kpa: [bool; 2],
     /// Questions answered "as typed", by their words.
     pub answered: Vec<String>,
 }
@@ -51,6 +57,67 @@ impl Sheet {
         self.texts[field.index()] = text.into();
     }
 
+    /// Sets the raw text of `field` as it is typed: a clock time is fixed to its day at once, so that it does not
+    /// become another day's while it waits.
+    pub fn type_text(&mut self, field: Field, text: impl Into<String>, now: &Now) {
+        self.set_text(field, text);
+        for (choice, clock) in TIMES {
+            if field == clock && self.pick(choice) == Some(CLOCK) {
+                *self.fixed_at(choice) = self.clock_moment(clock, now);
+            }
+        }
+    }
+
+    fn clock_moment(&self, clock: Field, now: &Now) -> Option<Moment> {
+        self.read(clock, AgeGroup::Adult).value().map(|minutes| last_time_of_day(minutes, now))
+    }
+
+    const fn fixed_at(&mut self, choice: Choice) -> &mut Option<Moment> {
+        if matches!(choice, Choice::Changed) { &mut self.changed_at } else { &mut self.drawn_at }
+    }
+
+    /// A clock time is nothing without its day.
+    pub fn empty_unfixed_clocks(&mut self) {
+        for (choice, clock) in TIMES {
+            if self.pick(choice) == Some(CLOCK) && self.fixed_at(choice).is_none() {
+                self.set_text(clock, "");
+            }
+        }
+    }
+
+    /// Puts the clock time in place of a chip such as "now" that has become untrue; says whether it did.
+    pub fn age_chips(&mut self, now: &Now) -> bool {
+        let mut aged = false;
+        for (choice, clock) in TIMES {
+            let ago = self.pick(choice).and_then(|pick| MINUTES_AGO.get(usize::from(pick)));
+            let Some((at, ago)) = (*self.fixed_at(choice)).zip(ago) else { continue };
+            if now.wall.minutes_since(at) - ago >= CHIP_HOLDS_MIN {
+                self.picks[choice.index()] = Some(CLOCK);
+                self.set_text(clock, at.clock(now.utc_offset_min));
+                aged = true;
+            }
+        }
+        aged
+    }
+
+    /// Whether `field` is typed in kPa.
+    pub const fn in_kpa(&self, field: Field) -> bool {
+        match field {
+            Field::Pco2 => self.kpa[0],
+            Field::Po2 => self.kpa[1],
+            _ => false,
+        }
+    }
+
+    /// Sets the unit of a gas pressure. An empty one beside it follows: a printout has one unit.
+    pub fn set_unit(&mut self, field: Field, kpa: bool) {
+        for (place, other) in [Field::Pco2, Field::Po2].into_iter().enumerate() {
+            if other == field || self.text(other).trim().is_empty() {
+                self.kpa[place] = kpa;
+            }
+        }
+    }
+
     /// The chip chosen, by its place.
     pub fn pick(&self, choice: Choice) -> Option<u8> {
         self.picks[choice.index()]
@@ -59,13 +126,13 @@ impl Sheet {
     /// Chooses a chip; a time's moment is fixed with it, counted back from `now`.
     pub fn choose(&mut self, choice: Choice, pick: Option<u8>, now: &Now) {
         self.picks[choice.index()] = pick;
+        let Some((_, clock)) = TIMES.into_iter().find(|(time, _)| *time == choice) else { return };
         let ago = pick.and_then(|pick| MINUTES_AGO.get(usize::from(pick)));
-        let at = ago.map(|minutes| now.wall.plus_minutes(-minutes));
-        match choice {
-            Choice::Drawn => self.drawn_at = at,
-            Choice::Changed => self.changed_at = at,
-            _ => {}
-        }
+        *self.fixed_at(choice) = match ago {
+            Some(minutes) => Some(now.wall.plus_minutes(-minutes)),
+            None if pick == Some(CLOCK) => self.clock_moment(clock, now),
+            None => None,
+        };
     }
 
     /// Puts back a kept chip without touching times.
@@ -89,7 +156,7 @@ impl Sheet {
             };
         }
         let Some(quantity) = spec.quantity else { return Reading::Empty };
-        let in_kpa = self.kpa && field.takes_kpa();
+        let in_kpa = self.in_kpa(field);
         match units::read_number(text) {
             Err(error) => Reading::Wrong(error.to_string()),
             Ok(typed) => {
@@ -131,24 +198,19 @@ impl Sheet {
 
     /// The unit printed beside a field.
     pub fn unit(&self, field: Field, group: AgeGroup) -> &'static str {
-        if self.kpa && field.takes_kpa() {
+        if self.in_kpa(field) {
             return words::KPA;
         }
         field.spec().quantity.map_or("", |quantity| units::limit(quantity, group).unit)
     }
 
-    /// The moment that a row of time chips stands for: fixed by the chip, or the last such clock time.
-    pub fn moment(&self, choice: Choice, now: &Now) -> Option<Moment> {
-        let (fixed, clock) = match choice {
-            Choice::Drawn => (self.drawn_at, Field::DrawnClock),
-            Choice::Changed => (self.changed_at, Field::ChangedClock),
-            _ => return None,
-        };
-        if self.pick(choice) == Some(CLOCK) {
-            let minutes = self.read(clock, AgeGroup::Adult).value()?;
-            return Some(last_time_of_day(minutes, now));
+    /// The moment that a row of time chips stands for: fixed when the chip was tapped or the clock time typed.
+    pub const fn moment(&self, choice: Choice) -> Option<Moment> {
+        match choice {
+            Choice::Drawn => self.drawn_at,
+            Choice::Changed => self.changed_at,
+            _ => None,
         }
-        fixed
     }
 
     /// Empties the fields and chips given, as after they were written.
@@ -220,7 +282,8 @@ mod tests {
 
     #[test]
     fn kpa_is_read_as_kpa_and_a_value_too_low_for_mmhg_says_that_it_may_be() {
-        let mut sheet = Sheet { kpa: true, ..Sheet::default() };
+        let mut sheet = Sheet::default();
+        sheet.set_unit(Field::Pco2, true);
         sheet.set_text(Field::Pco2, "5.3");
         let value = sheet.read(Field::Pco2, AgeGroup::Adult).value().unwrap();
         assert!((value - 39.75).abs() < 0.01, "{value}");
@@ -256,11 +319,13 @@ mod tests {
         let now = Now { utc_offset_min: 60, ..Now::at(Moment(1_772_486_400_000)) };
         let mut sheet = Sheet::default();
         sheet.choose(Choice::Drawn, Some(CLOCK), &now);
-        assert_eq!(sheet.moment(Choice::Drawn, &now), None);
-        sheet.set_text(Field::DrawnClock, "22:10");
-        assert_eq!(sheet.moment(Choice::Drawn, &now), Some(now.wall.plus_minutes(-10.0)));
-        sheet.set_text(Field::DrawnClock, "23:00");
-        assert_eq!(sheet.moment(Choice::Drawn, &now), Some(now.wall.plus_minutes(-1400.0)));
+        assert_eq!(sheet.moment(Choice::Drawn), None);
+        sheet.type_text(Field::DrawnClock, "22:10", &now);
+        assert_eq!(sheet.moment(Choice::Drawn), Some(now.wall.plus_minutes(-10.0)));
+        sheet.type_text(Field::DrawnClock, "23:00", &now);
+        assert_eq!(sheet.moment(Choice::Drawn), Some(now.wall.plus_minutes(-1400.0)));
+        sheet.type_text(Field::DrawnClock, "23:0", &now);
+        assert_eq!(sheet.moment(Choice::Drawn), None);
     }
 
     #[test]
@@ -268,7 +333,17 @@ mod tests {
         let now = Now::at(Moment(1_772_486_400_000));
         let mut sheet = Sheet::default();
         sheet.choose(Choice::Drawn, Some(2), &now);
-        let later = Now::at(now.wall.plus_minutes(7.0));
-        assert_eq!(sheet.moment(Choice::Drawn, &later), Some(now.wall.plus_minutes(-10.0)));
+        assert_eq!(sheet.moment(Choice::Drawn), Some(now.wall.plus_minutes(-10.0)));
+    }
+
+    #[test]
+    fn a_chip_gives_way_to_its_clock_time_after_five_minutes() {
+        let now = Now::at(Moment(1_772_486_400_000)); // 21:20Z
+        let mut sheet = Sheet::default();
+        sheet.choose(Choice::Drawn, Some(2), &now);
+        assert!(!sheet.age_chips(&Now::at(now.wall.plus_minutes(4.9))));
+        assert!(sheet.age_chips(&Now::at(now.wall.plus_minutes(26.0 * 60.0))));
+        assert_eq!((sheet.pick(Choice::Drawn), sheet.text(Field::DrawnClock)), (Some(CLOCK), "21:10"));
+        assert_eq!(sheet.moment(Choice::Drawn), Some(now.wall.plus_minutes(-10.0)), "the day stays");
     }
 }

@@ -3,7 +3,7 @@
 use case::{
     Airway, Control, Correction, Effort, EntryId, EntryKind, Gas, Leak, Moment, Person, Settings, Site,
 };
-use units::AgeGroup;
+use units::{AgeGroup, Quantity};
 
 use super::choice::{self, Breathes, Choice};
 use super::field::Field;
@@ -26,6 +26,12 @@ pub fn gas(sheet: &Sheet, group: AgeGroup, settings_held_min: Option<f64>) -> Op
         analysed_at: None,
         settings_held_min,
     })
+}
+
+/// Minutes that the settings of `since` had been held when a gas was drawn, for the gas's entry. Not known for a gas
+/// from before them, nor beyond what an entry can say: the record's own times tell it then.
+pub fn held_min(since: Moment, drawn: Moment) -> Option<f64> {
+    units::check(Quantity::SettingsHeldMin, AgeGroup::Adult, drawn.minutes_since(since)).ok()
 }
 
 /// The settings as typed: only what differs from those in force.
@@ -161,7 +167,9 @@ pub fn person(sheet: &Sheet) -> Person {
 
 /// Puts what is known of the case into the sheet's fields, unless somebody has begun to change them.
 pub fn offer_person(sheet: &mut Sheet, case: &case::Case) {
-    if !sheet.text(Field::Label).is_empty() {
+    let begun = sheet.any_text(&[Field::Label, Field::Age, Field::Height, Field::Weight])
+        || [Choice::Sex, Choice::HeightHow].into_iter().any(|choice| sheet.pick(choice).is_some());
+    if begun {
         return;
     }
     let person = &case.person;
@@ -297,7 +305,7 @@ mod tests {
 
     fn ferry_case() -> (Case, Moment) {
         let sheet = ferry();
-        let drawn = sheet.moment(Choice::Drawn, &now()).unwrap();
+        let drawn = sheet.moment(Choice::Drawn).unwrap();
         let mut case = Case::new("Bed 3");
         let typed = settings(&sheet, &Settings::default(), AgeGroup::Adult);
         let gas = gas(&sheet, AgeGroup::Adult, None).unwrap();
@@ -313,6 +321,13 @@ mod tests {
         assert_eq!(typed.effort, Some(Effort::None));
         assert_eq!(typed.leak, Some(Leak::None));
         assert_eq!((typed.rate_per_min, typed.tidal_volume_ml), (Some(18.0), Some(340.0)));
+    }
+
+    #[test]
+    fn settings_held_for_longer_than_an_entry_can_say_are_left_to_the_record() {
+        let held = |minutes: f64| held_min(now().wall.plus_minutes(-minutes), now().wall);
+        assert_eq!((held(90.0), held(0.0)), (Some(90.0), Some(0.0)));
+        assert_eq!((held(1530.0), held(-5.0)), (None, None));
     }
 
     #[test]
@@ -367,6 +382,9 @@ mod tests {
         sheet.set_text(Field::Height, "170");
         offer_person(&mut sheet, &case);
         assert_eq!(sheet.text(Field::Height), "170", "what was begun stays");
+        sheet.set_text(Field::Label, "");
+        offer_person(&mut sheet, &case);
+        assert_eq!(sheet.text(Field::Height), "170", "and without a label too");
     }
 
     #[test]

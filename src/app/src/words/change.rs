@@ -82,7 +82,7 @@ pub fn said(change: &Settings, forecast: &Forecast) -> String {
 pub fn changes(change: &Settings) -> String {
     let mut parts = vec![];
     if let Some(rate) = change.rate_per_min {
-        parts.push(format!("rate {}", as_typed(rate)));
+        parts.push(format!("rate {}/min", as_typed(rate)));
     }
     if let Some(volume) = change.tidal_volume_ml {
         parts.push(format!("tidal volume {} mL", as_typed(volume)));
@@ -112,6 +112,6 @@ mod tests {
         assert_eq!(compared(&old, &rate), "if 18");
         let both = Settings { tidal_volume_ml: Some(360.0), ..rate };
         assert_eq!(compared(&old, &both), "if 18, 340 mL");
-        assert_eq!(changes(&both), "rate 26 and tidal volume 360 mL");
+        assert_eq!(changes(&both), "rate 26/min and tidal volume 360 mL");
     }
 }

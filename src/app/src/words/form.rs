@@ -3,12 +3,12 @@
 use case::{Moment, Now};
 use units::OutOfLimits;
 
-use super::values::{as_typed, clock, number};
+use super::values::{as_typed, clock, day_and_clock, number};
 
 /// kPa.
 pub const KPA: &str = "kPa";
 /// The unit button, spoken.
-pub const OTHER_UNIT: &str = "Change the unit of PCO2 and PO2";
+pub const OTHER_UNIT: &str = "Change the unit";
 /// PO2 of a sample that is not arterial.
 pub const PO2: &str = "PO₂";
 /// Heading over what may be left out.
@@ -80,6 +80,18 @@ pub const SETTINGS_OTHER: &str = "Settings have changed";
 pub fn still(label: &str) -> String {
     format!("Still {label}?")
 }
+/// The moment that a chip or a clock time stands for.
+pub fn time_meant(at: Moment, now: &Now) -> String {
+    format!("That is {}.", day_and_clock(at, now))
+}
+/// A moment more than half a day back.
+pub fn far_back(label: &str, at: Moment, now: &Now) -> String {
+    format!("{label} {}, more than 12 h ago: is that right?", day_and_clock(at, now))
+}
+/// PO2 stands in another unit than PCO2.
+pub fn po2_unit(typed: f64, as_kpa_mmhg: f64) -> String {
+    format!("PO₂ {}: did you read mmHg, or kPa ({} mmHg)?", as_typed(typed), number(as_kpa_mmhg, 0))
+}
 /// The old value as a hint.
 pub fn was(value: f64) -> String {
     format!("was {}", as_typed(value))
@@ -87,7 +99,8 @@ pub fn was(value: f64) -> String {
 /// Nothing has been typed.
 pub const NOTHING_TYPED: &str = "Nothing new is typed. Type what has changed, or go back.";
 /// A gas was begun and isn't whole.
-pub const GAS_UNFINISHED: &str = "The gas isn't complete. Finish it, or empty its fields.";
+pub const GAS_UNFINISHED: &str =
+    "The gas isn't finished: something in it is missing, wrong or asked. See to it, or empty its fields.";
 
 /// As typed.
 pub const AS_TYPED: &str = "It is as typed";

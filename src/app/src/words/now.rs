@@ -3,7 +3,7 @@
 use bedside::{Forecast, Quantiles};
 use case::{Gas, Moment, Now, Site};
 
-use super::values::{about, as_typed, clock, day_and_clock, number, paco2_range, ph_range};
+use super::values::{about, as_typed, clock, day_and_clock, in_words, number, paco2_range, ph_range};
 
 /// The room.
 pub const TITLE: &str = "Now";
@@ -99,10 +99,10 @@ pub fn when_settled(within: &Quantiles, now: &Now) -> String {
 /// The picture in one sentence, for those who can't see it.
 pub fn picture(paco2: &Quantiles, forecast: &Forecast, now: &Now) -> String {
     format!(
-        "At {} PaCO₂ {}, 8 times in 10 {} mmHg. {} {}",
+        "At {} PaCO₂ {}, {} mmHg. {} {}",
         clock(now.wall, now),
         about(paco2.p50, 0),
-        paco2_range(paco2),
+        in_words(&paco2_range(paco2)),
         heading(paco2.p50, forecast),
         when_settled(&forecast.minutes_to_within_2_mmhg, now),
     )
@@ -118,14 +118,15 @@ pub fn still_so_button(label: &str) -> String {
 }
 /// An hour unconfirmed.
 pub fn expired(gas: Option<(&Gas, Moment)>, since: Moment, now: &Now) -> String {
-    let until = day_and_clock(since.plus_minutes(60.0), now);
+    let since = day_and_clock(since, now);
     match gas {
         Some((gas, drawn)) => format!(
-            "Last measured {} at {}. Not known since {until}. Type a gas, or what has changed.",
+            "Last measured: {} {} mmHg at {}. Not known since {since}. Type a gas, or what has changed.",
+            name(gas),
             number(gas.pco2_mmhg, 0),
             day_and_clock(drawn, now),
         ),
-        None => format!("Not known since {until}. Type a gas, or what has changed."),
+        None => format!("Not known since {since}. Type a gas, or what has changed."),
     }
 }
 /// Somebody looked.
@@ -135,14 +136,32 @@ pub fn nothing_changed(label: &str) -> String {
 
 /// The last gas in a line.
 pub fn last_gas(gas: &Gas, drawn: Moment, now: &Now) -> String {
-    let name = if gas.site == Site::Arterial { "PaCO₂" } else { "PCO₂" };
     format!(
-        "Last measured {}: {name} {}, pH {}{}.",
+        "Last measured at {}: {} {} mmHg, pH {}{}.",
         day_and_clock(drawn, now),
+        name(gas),
         number(gas.pco2_mmhg, 0),
         number(gas.ph, 2),
         site(gas.site),
     )
+}
+
+/// How long ago a gas was drawn.
+pub fn age(drawn: Moment, now: &Now) -> String {
+    let minutes = now.wall.minutes_since(drawn);
+    match minutes {
+        _ if minutes < 1.0 => "That was just now.".to_owned(),
+        _ if minutes < 120.0 => format!("That was {} min ago.", number(minutes.floor(), 0)),
+        _ => format!("That was {} h ago.", number((minutes / 60.0).floor(), 0)),
+    }
+}
+
+/// What the carbon dioxide of a gas is called.
+const fn name(gas: &Gas) -> &'static str {
+    match gas.site {
+        Site::Arterial => "PaCO₂",
+        Site::Capillary | Site::CentralVenous | Site::PeripheralVenous => "PCO₂",
+    }
 }
 
 /// Where a gas is from, unless it is arterial.
@@ -158,7 +177,7 @@ pub fn site(site: Site) -> &'static str {
 /// A gas outside its band.
 pub fn doubt(measured: f64, expected: (f64, f64), at: Moment, now: &Now) -> String {
     format!(
-        "The gas of {} reads {}. 95 times in 100 it would have read {} to {}. Check the patient, then the sample.",
+        "The gas of {} reads {} mmHg. 95 times in 100 it would have read {} to {} mmHg. Check the patient, then the sample.",
         day_and_clock(at, now),
         number(measured, 0),
         number(expected.0, 0),
@@ -166,7 +185,7 @@ pub fn doubt(measured: f64, expected: (f64, f64), at: Moment, now: &Now) -> Stri
     )
 }
 /// What is asked then.
-pub const DOUBT_ASK: &str = "Which is it? Until you say, the forecast leaves this gas out.";
+pub const DOUBT_ASK: &str = "Which is it? Until you say, there is no forecast.";
 /// The three ways.
 pub const DOUBT_WAYS: [&str; 3] =
     ["The sample: leave it out", "The patient has changed", "The machine or circuit has changed"];
@@ -195,7 +214,7 @@ pub fn assumed(item: &bedside::Assumed) -> String {
 pub fn offer(change: &case::Settings) -> String {
     let mut parts = vec![];
     if let Some(rate) = change.rate_per_min {
-        parts.push(format!("rate {}", as_typed(rate)));
+        parts.push(format!("rate {}/min", as_typed(rate)));
     }
     if let Some(volume) = change.tidal_volume_ml {
         parts.push(format!("VT {} mL", as_typed(volume)));
@@ -210,7 +229,7 @@ pub fn price(price: &bedside::Price) -> String {
         parts.push(format!("{} mL/kg", number(per_kg, 1)));
     }
     if let Some(plateau) = price.plateau_cmh2o {
-        parts.push(format!("plateau {}", number(plateau, 0)));
+        parts.push(format!("plateau {} cmH₂O", number(plateau, 0)));
     }
     parts.push(format!("{} L/min", number(price.minute_volume_l_min, 1)));
     parts.join(" · ")
@@ -229,18 +248,18 @@ pub mod chart {
     /// Reads the chart by a slider.
     pub const READ: &str = "Read the chart at";
     /// Table headings.
-    pub const HEADS: [&str; 4] = ["Time", "PaCO₂ mmHg", "pH", "A gas would read"];
+    pub const HEADS: [&str; 4] = ["Time", "PaCO₂ mmHg", "pH", "A gas would read, mmHg"];
 
-    use super::{Quantiles, about, number, paco2_range};
+    use super::{Quantiles, about, in_words, number, paco2_range};
 
     /// A gas in the table.
     pub fn measured(mmhg: f64) -> String {
-        format!("a gas read {}", number(mmhg, 0))
+        format!("a gas read {} mmHg", number(mmhg, 0))
     }
 
     /// One point of the chart, said.
     pub fn point(clock: &str, paco2: &Quantiles) -> String {
-        format!("{clock}: {}, {} mmHg", about(paco2.p50, 0), paco2_range(paco2))
+        format!("{clock}: {} mmHg, {}", about(paco2.p50, 0), in_words(&paco2_range(paco2)))
     }
 }
 
@@ -322,7 +341,7 @@ mod tests {
         let words = expired(Some((&gas, drawn)), drawn, &NOW);
         assert_eq!(
             words,
-            "Last measured 71 at 20:08. Not known since 21:08. Type a gas, or what has changed."
+            "Last measured: PaCO₂ 71 mmHg at 20:08. Not known since 20:08. Type a gas, or what has changed."
         );
     }
 }

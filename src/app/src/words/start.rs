@@ -66,5 +66,18 @@ pub fn unsaved(count: usize) -> String {
     let entries = if count == 1 { "1 entry is".to_owned() } else { format!("{count} entries are") };
     format!("{entries} not stored on this device: only on this screen. Export the case now.")
 }
+/// What is typed can't be kept.
+pub const DRAFT_LOST: &str =
+    "This browser's storage is full or blocked: what you type now is only on this screen.";
+/// A draft could not be read whole.
+pub const DRAFT_DAMAGED: &str =
+    "What was typed here last could not be read whole. It is kept as found, under Record. Type it again.";
+/// Texts that could not be read.
+pub fn set_aside(count: usize) -> String {
+    let texts = if count == 1 { "1 text".to_owned() } else { format!("{count} texts") };
+    format!("{texts} on this device could not be read, and the forecast may lack it. Kept as found under")
+}
+/// The new version has to wait.
+pub const UPDATE_WAITS: &str = "Not loaded: something is only on this screen and would be lost. Export the case first, then close the page and open it.";
 /// No names for entries.
 pub const NO_IDS: &str = "Nothing was written: this browser gives no random numbers, which entries are named by. Use another browser.";

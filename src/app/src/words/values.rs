@@ -16,10 +16,10 @@ pub fn number(value: f64, decimals: usize) -> String {
     }
 }
 
-/// A typed number as it was typed: no decimals it did not have.
+/// A typed number as it was typed: no decimals it did not have, nor those of a conversion.
 pub fn as_typed(value: f64) -> String {
-    let text = format!("{value}");
-    text.replace('-', "\u{2212}")
+    let text = number(value, 3);
+    text.trim_end_matches('0').trim_end_matches('.').to_owned()
 }
 
 /// "≈57".
@@ -53,16 +53,16 @@ pub fn clock(moment: Moment, now: &Now) -> String {
     moment.clock(now.utc_offset_min)
 }
 
-/// The wall clock, with the day where it is another one than today.
+/// The wall clock, with the day where it is another one than today: reads well after "at", "of" and "since".
 pub fn day_and_clock(moment: Moment, now: &Now) -> String {
     let days = day(now.wall, now) - day(moment, now);
     let clock = clock(moment, now);
     match days {
         0 => clock,
-        1 => format!("yesterday {clock}"),
-        -1 => format!("tomorrow {clock}"),
-        2.. => format!("{days} days ago {clock}"),
-        _ => format!("in {} days {clock}", -days),
+        1 => format!("{clock} yesterday"),
+        -1 => format!("{clock} tomorrow"),
+        2.. => format!("{clock}, {days} days ago"),
+        _ => format!("{clock} in {} days", -days),
     }
 }
 
@@ -102,13 +102,21 @@ mod tests {
     }
 
     #[test]
+    fn a_typed_number_gains_no_decimals() {
+        assert_eq!(as_typed(14.026_159_400_000_001), "14.026");
+        assert_eq!(as_typed(340.0), "340");
+        assert_eq!(as_typed(7.21), "7.21");
+        assert_eq!(as_typed(-4.5), "\u{2212}4.5");
+    }
+
+    #[test]
     fn another_day_is_named() {
         // 2026-03-02T00:20Z, where the local clock says 01:20.
         let now = Now { utc_offset_min: 60, ..Now::at(Moment(1_772_410_800_000)) };
         assert_eq!(day_and_clock(now.wall.plus_minutes(-30.0), &now), "00:50");
-        assert_eq!(day_and_clock(now.wall.plus_minutes(-90.0), &now), "yesterday 23:50");
-        assert_eq!(day_and_clock(now.wall.plus_minutes(-90.0 - 1440.0), &now), "2 days ago 23:50");
-        assert_eq!(day_and_clock(now.wall.plus_minutes(1439.0), &now), "tomorrow 01:19");
+        assert_eq!(day_and_clock(now.wall.plus_minutes(-90.0), &now), "23:50 yesterday");
+        assert_eq!(day_and_clock(now.wall.plus_minutes(-90.0 - 1440.0), &now), "23:50, 2 days ago");
+        assert_eq!(day_and_clock(now.wall.plus_minutes(1439.0), &now), "01:19 tomorrow");
     }
 
     #[test]

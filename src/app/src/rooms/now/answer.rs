@@ -56,7 +56,9 @@ fn html(present: Option<&Present>, gas: Option<(Gas, Moment)>) -> String {
             .map(|ratio| said("p", "sentence", &words::ratio(ratio.minute_volume_factor, &ratio.paco2_mmhg)));
         gas.unwrap_or_default() + &ratio.unwrap_or_default()
     } else {
-        numbers
+        // How old the gas is stands beside what was calculated from it.
+        let gas = gas.map(|(gas, at)| words::last_gas(&gas, at, now) + " " + &words::age(at, now));
+        numbers + &gas.map(|words| said("p", "hint", &words)).unwrap_or_default()
     };
     // A gas that does not fit is asked about right below, with its three answers.
     let standing =

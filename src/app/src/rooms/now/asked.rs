@@ -5,8 +5,9 @@ use case::{Airway, EntryKind, GasChoice, GasVerdict};
 use leptos::prelude::*;
 
 use super::words;
+use crate::device::page;
 use crate::parts::buttons::{perhaps, plain};
-use crate::parts::chips::{chip, group};
+use crate::parts::chips::{chip, group, row};
 use crate::state::app::App;
 use crate::state::writing::{Held, held_corrections, held_is_open};
 
@@ -34,6 +35,7 @@ fn ask(app: App, doubt: &Doubt) -> AnyView {
             let now = app.tick();
             let verdict = GasVerdict { of: of.clone(), choice };
             app.write(vec![(now.wall, EntryKind::GasVerdict(verdict))]);
+            page::focus("room-title");
         }));
     }
     view! {
@@ -55,16 +57,18 @@ pub fn held(app: App) -> AnyView {
             for (held, words) in Held::ALL.into_iter().zip(words::HELD_CHIPS) {
                 chips.push(chip(
                     words,
-                    "",
+                    None,
                     || false,
                     move || {
                         let now = app.tick();
                         let corrections = untrack(|| held_corrections(&app.case(), held));
                         app.write(corrections.into_iter().map(|kind| (now.wall, kind)).collect());
+                        // The chips are gone with their answer: the focus goes on from the top of the room.
+                        page::focus("room-title");
                     },
                 ));
             }
-            group(words::HELD, 3, chips, || None)
+            group(words::HELD, vec![row(3, chips)], None, || None)
         }))
     };
     view! { {move || asked()} }.into_any()

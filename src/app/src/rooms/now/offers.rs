@@ -89,7 +89,11 @@ fn html(offer: &Offer) -> String {
         element("span", "offer-figure", &inner)
     };
     let seen = said("b", "offer-what", &words::offer(&offer.change))
-        + &figure("PaCO₂ ", &about(settled.paco2_mmhg.p50, 0), &paco2_range(&settled.paco2_mmhg))
+        + &figure(
+            "PaCO₂ ",
+            &about(settled.paco2_mmhg.p50, 0),
+            &format!("{} {}", paco2_range(&settled.paco2_mmhg), words::MMHG),
+        )
         + &figure("pH ", &about(settled.ph.p50, 2), &ph_range(&settled.ph))
         + &said("small", "offer-price", &words::price(&offer.price));
     // Read as one sentence, seen as a row of a table.
