@@ -5,8 +5,6 @@ use crate::harness::{Phone, Setup};
 use crate::steps::{about, first_answer};
 use anyhow::{Context, Result, ensure};
 use serde_json::json;
-use std::time::Duration;
-use tokio::time::sleep;
 
 /// What a hurried hand may need at most; the aim is 8 taps and 10 digits.
 const MOST_TAPS: u32 = 15;
@@ -131,8 +129,8 @@ fn what_was_written_survives_a_crash() {
         let record = open_record(phone).await?;
         phone.wait_for_state("offline", "ready").await?;
         world.server.stop().await?;
-        // The browser writes its storage to disk some seconds later; nothing the page can do makes it sooner.
-        sleep(Duration::from_secs(10)).await;
+        let after = phone.wait_until_on_disk(r#""rate_per_min":26"#).await?;
+        println!("the change was on the browser's disk {:.0} s after it was written", after.as_secs_f64());
         phone.crash().await?;
         assert_eq!(open_record(phone).await?, record);
         Ok(())

@@ -78,6 +78,23 @@ impl Phone {
         Ok(())
     }
 
+    /// Waits until the browser has written `text`, as it stands in local storage, to its disk; says after how long.
+    /// It does so in batches, seconds apart at first and up to a minute each when much was written: nothing the
+    /// page can do makes it sooner.
+    pub async fn wait_until_on_disk(&self, text: &str) -> Result<Duration> {
+        const MOST: Duration = Duration::from_secs(240);
+        let folder = self.profile.path().join("Default/Local Storage/leveldb");
+        let began = Instant::now();
+        while began.elapsed() < MOST {
+            let files = fs::read_dir(&folder)?.filter_map(|entry| fs::read(entry.ok()?.path()).ok());
+            if files.into_iter().any(|bytes| bytes.windows(text.len()).any(|part| part == text.as_bytes())) {
+                return Ok(began.elapsed());
+            }
+            sleep(Duration::from_millis(500)).await;
+        }
+        bail!("{text} was not on disk after {MOST:?}")
+    }
+
     /// Ends the browser as a flat battery would, in the middle of a word, and starts it again with the same profile.
     pub async fn crash(&self) -> Result<()> {
         let mut session = self.session.lock().await;
