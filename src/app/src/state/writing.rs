@@ -29,9 +29,10 @@ pub fn gas(sheet: &Sheet, group: AgeGroup, settings_held_min: Option<f64>) -> Op
 }
 
 /// Minutes that the settings of `since` had been held when a gas was drawn, for the gas's entry. Not known for a gas
-/// from before them, nor beyond what an entry can say: the record's own times tell it then.
+/// from before them, nor beyond what an entry can say: the record's own times tell it then. Whole minutes, the last
+/// one finished.
 pub fn held_min(since: Moment, drawn: Moment) -> Option<f64> {
-    units::check(Quantity::SettingsHeldMin, AgeGroup::Adult, drawn.minutes_since(since)).ok()
+    units::check(Quantity::SettingsHeldMin, AgeGroup::Adult, drawn.minutes_since(since).floor()).ok()
 }
 
 /// The settings as typed: only what differs from those in force.
