@@ -14,7 +14,7 @@ pub(crate) fn of(study: &Study, learnt: &Learnt) -> Vec<Assumed> {
     all.push(per_cent(
         "VCO₂/(1 − VD/VT) moves with a change of settings by",
         s::JUMP,
-        "Draw a gas after the change.",
+        "After a change, type the next gas.",
     ));
     all
 }
@@ -47,7 +47,7 @@ fn per_cent(name: &'static str, figure: Figure, narrows: &'static str) -> Assume
 }
 
 fn about_the_start(learnt: &Learnt) -> Vec<Assumed> {
-    let held = "Say how long the settings had been held at the gas.";
+    let held = "Say how long the settings had been held.";
     match learnt.first_gas.settings_held_min {
         None => vec![per_cent("Start not known to be settled", s::START_OFFSET, held)],
         Some(_) => vec![],
@@ -131,11 +131,17 @@ fn about_the_blood(learnt: &Learnt) -> Vec<Assumed> {
     let mut all = Vec::new();
     if !learnt.hb_known {
         let middle = (s::HB_UNKNOWN.value, s::HB_UNKNOWN.spread);
-        all.push(row("Haemoglobin", s::HB_UNKNOWN, middle, "g/dL", "Type the haemoglobin from the gas."));
+        all.push(row(
+            "Haemoglobin",
+            s::HB_UNKNOWN,
+            middle,
+            "g/dL",
+            "Type the haemoglobin with the next gas.",
+        ));
     }
     if !learnt.saturation_known {
         let middle = (s::SAO2_UNKNOWN.value, s::SAO2_UNKNOWN.spread);
-        all.push(row("Arterial saturation", s::SAO2_UNKNOWN, middle, "", "Type PaO₂ from the gas."));
+        all.push(row("Arterial saturation", s::SAO2_UNKNOWN, middle, "", "Type PaO₂ with the next gas."));
     }
     all
 }

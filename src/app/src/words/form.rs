@@ -27,7 +27,7 @@ pub const UNAIDED: &str = "Without a machine there is no forecast. The gas is ke
 pub const ONLY_CHANGED: &str = "Type only what has changed or was newly measured.";
 /// Why a person is asked.
 pub const PERSON_WHY: &str =
-    "No name, no number. Each of these narrows the forecast; height and sex give mL/kg.";
+    "Nothing here tells who it is. Each narrows the forecast; height and sex give mL/kg.";
 
 /// Something needed is missing.
 pub fn needed(label: &str) -> String {

@@ -16,12 +16,14 @@ fn room_for(narrows: &str) -> Option<Room> {
         Some(Room::Person)
     } else if has(&["exchanger", "plateau", "PEEP", "FiO", "minute volume", "expired"]) {
         Some(Room::Settings)
+    } else if has(&["gas."]) {
+        Some(Room::Gas)
     } else {
         None
     }
 }
 
-/// The list, and under it what is assumed and nothing at the bedside narrows.
+/// The list, and under it what is assumed and can't be replaced from here.
 pub fn narrow(app: App) -> AnyView {
     let list = move |narrows: bool| {
         app.present.with(|present| {
@@ -46,7 +48,7 @@ pub fn narrow(app: App) -> AnyView {
 
 fn html(assumed: &[Assumed], narrows: bool) -> String {
     let mut rows = String::new();
-    for item in assumed.iter().filter(|item| item.narrows.is_empty() != narrows) {
+    for item in assumed.iter().filter(|item| room_for(item.narrows).is_some() == narrows) {
         let how = match room_for(item.narrows) {
             _ if item.narrows.is_empty() => String::new(),
             Some(room) => {
@@ -68,6 +70,8 @@ mod tests {
         assert_eq!(room_for("Type height and weight."), Some(Room::Person));
         assert_eq!(room_for("Give the sex."), Some(Room::Person));
         assert_eq!(room_for("Type the volume of exchanger and mount."), Some(Room::Settings));
-        assert_eq!(room_for("Draw a gas after the change."), None);
+        assert_eq!(room_for("Type PaO₂ with the next gas."), Some(Room::Gas));
+        assert_eq!(room_for("Give temperature and sedation."), None);
+        assert_eq!(room_for(""), None);
     }
 }
