@@ -42,7 +42,7 @@ pub struct Offer {
 pub struct Offers {
     /// At most three, none chosen.
     pub offers: Vec<Offer>,
-    /// Why there are fewer, each a sentence.
+    /// Why there are fewer, and when none of them should be used, each a sentence.
     pub fewer_because: Vec<Caution>,
 }
 
@@ -114,6 +114,11 @@ impl Study {
         }
         if dropped {
             offers.fewer_because.push(self.overshoot_reason(learnt));
+        }
+        // Nobody has said whether he has it: where it is, each of these could kill.
+        if !offers.offers.is_empty() && self.history.has(|c| *c == Condition::AirflowObstruction).is_none() {
+            let words = "Not in airflow obstruction: there a faster rate traps gas and can raise PaCO₂.";
+            offers.fewer_because.push(because("obstruction_unasked", words, None));
         }
     }
 

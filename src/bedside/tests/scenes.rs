@@ -15,6 +15,8 @@ fn night_ferry_gets_three_rates_with_where_they_lead() {
     let offers = answer.value.unwrap();
     let rates: Vec<f64> = offers.offers.iter().map(|o| o.price.rate_per_min).collect();
     assert_eq!(rates, [22.0, 26.0, 30.0]);
+    // Nobody has said whether she has airflow obstruction.
+    assert!(offers.fewer_because.iter().any(|c| c.id == "obstruction_unasked"));
     for offer in &offers.offers {
         let (p, ph) = (offer.forecast.settled.paco2_mmhg, offer.forecast.settled.ph);
         println!(
