@@ -142,3 +142,22 @@ fn a_file_far_too_large_is_refused_unread() {
         Ok(())
     });
 }
+
+#[test]
+fn an_empty_gas_is_not_taken_and_each_missing_field_is_named() {
+    Setup::default().run(|world| async move {
+        let phone = &world.phone;
+        phone.open("").await?;
+        phone.tap("TYPE A GAS").await?;
+        phone.wait_until("location.hash === '#/gas'").await?;
+        phone.tap("SETTINGS").await?;
+        phone.wait_until("document.body.innerText.includes('Needed: pH.')").await?;
+        let text = phone.text().await?;
+        ensure!(text.contains("Needed: PaCO₂."), "the second field is named too: {text}");
+        phone.wait_until("location.hash === '#/gas'").await?;
+        let kept = "return Object.keys(localStorage).filter((key) => key.startsWith('slackwater.journal.'))";
+        let kept = phone.script(kept, vec![]).await?;
+        ensure!(kept.as_array().is_some_and(Vec::is_empty), "something of it was kept: {kept}");
+        Ok(())
+    });
+}
